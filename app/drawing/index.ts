@@ -1,0 +1,2 @@
+export * from './plot'
+export * from './scene'

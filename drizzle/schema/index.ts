@@ -1,0 +1,6 @@
+export * from './audit'
+export * from './auth'
+export * from './link'
+export * from './mail'
+export * from './section'
+export * from './site'
