@@ -8,6 +8,10 @@ const underTest = Boolean(process.env.VITEST)
 export default defineConfig({
   plugins: underTest ? [] : [tailwindcss(), reactRouter()],
   resolve: { tsconfigPaths: true },
+  // Each server of this clone (DOAB_VAR) keeps its own ready-made packages; two on one folder would spoil each other's.
+  cacheDir: process.env.DOAB_VAR ? `${process.env.DOAB_VAR}/vite` : undefined,
+  // The database writes there all the time.
+  server: { watch: { ignored: ['**/var/**', '**/build/**'] } },
   optimizeDeps: { include: ['konva', 'react-konva', 'yjs', 'y-websocket', 'y-indexeddb', 'mathjs'] },
   test: {
     projects: [

@@ -91,6 +91,8 @@ CREATE TABLE `two_factor` (
 	`secret` text NOT NULL,
 	`backup_codes` text NOT NULL,
 	`verified` boolean DEFAULT true,
+	`failed_verification_count` int DEFAULT 0,
+	`locked_until` timestamp(3),
 	CONSTRAINT `two_factor_id` PRIMARY KEY(`id`)
 );
 --> statement-breakpoint
@@ -204,6 +206,12 @@ CREATE TABLE `section_view` (
 	`readings` json,
 	`at` timestamp(3) NOT NULL DEFAULT (now()),
 	CONSTRAINT `section_view_section_id` PRIMARY KEY(`section_id`)
+);
+--> statement-breakpoint
+CREATE TABLE `setup` (
+	`name` varchar(60) NOT NULL,
+	`at` timestamp(3) NOT NULL DEFAULT (now()),
+	CONSTRAINT `setup_name` PRIMARY KEY(`name`)
 );
 --> statement-breakpoint
 CREATE TABLE `site` (

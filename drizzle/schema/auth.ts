@@ -131,6 +131,8 @@ export const twoFactor = mysqlTable(
     secret: text().notNull(),
     backupCodes: text().notNull(),
     verified: boolean().default(true),
+    failedVerificationCount: int().default(0),
+    lockedUntil: at(),
   },
   (t) => [index('two_factor_user').on(t.userId)],
 )

@@ -1,0 +1,18 @@
+import { index, layout, type RouteConfig, route } from '@react-router/dev/routes'
+
+// One line a page; whoever adds a route adds its line to the group it belongs to.
+export default [
+  index('routes/_public/front.tsx'),
+
+  layout('routes/_account/layout.tsx', [
+    route('sign-in', 'routes/_account/sign-in.tsx'),
+    route('sign-up', 'routes/_account/sign-up.tsx'),
+    route('forgot', 'routes/_account/forgot.tsx'),
+    route('reset', 'routes/_account/reset.tsx'),
+    route('sign-out', 'routes/_account/sign-out.tsx'),
+  ]),
+
+  route('mailbox', 'routes/mailbox.tsx'),
+  route('health', 'routes/health.ts'),
+  route('api/auth/*', 'routes/api/auth.ts'),
+] satisfies RouteConfig

@@ -1,0 +1,23 @@
+import { Form, redirect } from 'react-router'
+import { auth } from '~/server/auth.server'
+import { personOf } from '~/server/context.server'
+import type { Route } from './+types/sign-out'
+
+export function loader({ context }: Route.LoaderArgs) {
+  if (!personOf(context)) throw redirect('/')
+  return null
+}
+
+export async function action({ request }: Route.ActionArgs) {
+  const { headers } = await auth.api.signOut({ headers: request.headers, returnHeaders: true })
+  throw redirect('/sign-in', { headers })
+}
+
+export default function SignOut() {
+  return (
+    <Form method="post">
+      <h1>Sign out</h1>
+      <button type="submit">Sign out</button>
+    </Form>
+  )
+}

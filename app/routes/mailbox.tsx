@@ -1,0 +1,3 @@
+export default function Mailbox() {
+  return <h1>Mailbox</h1>
+}

@@ -1,0 +1,51 @@
+import { eq } from 'drizzle-orm'
+import { connect } from '../../drizzle/client'
+import { MigrationError, migrate, reason } from '../../drizzle/migrate'
+import { setup } from '../../drizzle/schema'
+import { seed } from '../../drizzle/seed'
+
+// Run by the starter before anything listens: migrates, and loads the demo once. Its last line on stderr is what the person
+// at the terminal reads when it fails.
+
+const { DATABASE_URL: url = '', DOAB_DEMO: demo = 'load', DOAB_OWN_DATABASE: own } = process.env
+const DEMO = 'demo'
+
+async function loadDemo() {
+  const { db, close } = connect(url, { connectionLimit: 4 })
+  try {
+    const [there] = await db.select().from(setup).where(eq(setup.name, DEMO))
+    if (demo === 'refuse') {
+      if (there)
+        throw new MigrationError(
+          'This database holds the demo, whose passwords everybody knows. In production give Doab an empty database (DATABASE_URL).',
+        )
+      return
+    }
+    if (there) return
+    process.stdout.write('seeding\n')
+    // All of the demo or none of it: the note that it is there is part of the same transaction.
+    await db.transaction(async (tx) => {
+      await tx.insert(setup).values({ name: DEMO })
+      await seed(tx)
+    })
+  } finally {
+    await close()
+  }
+}
+
+async function main() {
+  try {
+    await migrate(url, { own: own === 'yes' })
+  } catch (error) {
+    if (error instanceof MigrationError) throw error
+    const { host } = new URL(url)
+    throw new MigrationError(`The database at ${host} cannot be reached: ${reason(error)}`)
+  }
+  await loadDemo()
+}
+
+main().catch((error: unknown) => {
+  if (error instanceof MigrationError) console.error(error.message)
+  else console.error(`The demo could not be loaded: ${reason(error)}\n${error instanceof Error ? error.stack : ''}`)
+  process.exitCode = 1
+})
