@@ -14,10 +14,13 @@ import { runStack } from './parts/stack.mjs'
 /** Rebuilds the sidecar on every change and tells when a new one is there. @param {string} out @param {() => void} changed */
 async function watchRealtime(out, changed) {
   const { context } = await import('esbuild')
+  /** @type {import('esbuild').Plugin} */
   const built = {
     name: 'built',
-    setup: (/** @type {import('esbuild').PluginBuild} */ build) =>
-      build.onEnd(({ errors }) => errors.length === 0 && changed()),
+    setup: (build) =>
+      build.onEnd(({ errors }) => {
+        if (errors.length === 0) changed()
+      }),
   }
   const watching = await context({ ...bundleOptions('realtime', out), plugins: [built] })
   await watching.watch()

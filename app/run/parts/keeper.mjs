@@ -4,7 +4,7 @@ import { openSync, rmSync, writeFileSync } from 'node:fs'
 // Stands between the starter and MariaDB, in a process group of its own so that Ctrl-C reaches the starter alone. Stops the
 // database cleanly when told to, and also when the starter is gone, however it went (its end of our stdin closes).
 // argv: file for the process number, file for the output, file to remove once the database is up or over, then the command.
-const [pidFile, logFile, secretFile, file, ...args] = process.argv.slice(2)
+const [pidFile = '', logFile = '', secretFile = '', file = '', ...args] = process.argv.slice(2)
 const out = openSync(logFile, 'a')
 const database = spawn(file, args, { stdio: ['ignore', out, out] })
 if (database.pid) writeFileSync(pidFile, String(database.pid))

@@ -53,10 +53,7 @@ export function signingSecrets(settings, made) {
           `In production (NODE_ENV=production, APP_URL=${settings.appUrl}) ${name} must be set to a secret of your own; the demo's is refused. Make one: openssl rand -base64 48`,
         )
   }
-  for (const [name, value] of [
-    ['AUTH_SECRET', auth],
-    ['LIVE_SECRET', live],
-  ])
+  for (const [name, value] of Object.entries({ AUTH_SECRET: auth, LIVE_SECRET: live }))
     if (value.length < 32) throw new Failure(`${name} has ${value.length} characters; it needs at least 32.`)
   if (auth === live) throw new Failure('AUTH_SECRET and LIVE_SECRET are the same; they need to differ.')
   return { auth, live }
