@@ -16,7 +16,7 @@ function liveOrigins(request: Request): string[] {
 /** The address holds a token: nothing may pass it on in a Referer, store it or list it. */
 const holdsToken = (path: string) => path.startsWith('/s/') || path.startsWith('/reset')
 
-/** Headers of every answer, pages and data alike. */
+/** Headers of every answer, pages and data alike; the web server writes them. */
 export function commonHeaders(path: string): [string, string][] {
   const headers: [string, string][] = [
     ['x-content-type-options', 'nosniff'],
@@ -31,12 +31,11 @@ export function commonHeaders(path: string): [string, string][] {
 }
 
 /**
- * Headers of a page. Scripts run only from our own files or with this page's one-time number; styles may be inline, because
+ * Further headers of a page. Scripts run only from our own files or with this page's one-time number; styles may be inline, because
  * drawings carry them. The development server injects scripts of its own, so there the policy stays off.
  */
 export function documentHeaders(request: Request, nonce: string): [string, string][] {
-  const headers: [string, string][] = [...commonHeaders(new URL(request.url).pathname)]
-  headers.push(['cache-control', 'private, no-cache'])
+  const headers: [string, string][] = [['cache-control', 'private, no-cache']]
   if (!production) return headers
   const policy = [
     "default-src 'self'",
