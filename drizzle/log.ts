@@ -22,7 +22,9 @@ export class NotAppended extends Error {
     readonly gone: string[],
     readonly stale: string[],
   ) {
-    super(`not stored: ${[...gone.map((id) => `${id} is gone`), ...stale.map((id) => `${id} has a new epoch`)].join(', ')}`)
+    super(
+      `not stored: ${[...gone.map((id) => `${id} is gone`), ...stale.map((id) => `${id} has a new epoch`)].join(', ')}`,
+    )
     this.name = 'NotAppended'
   }
 }
@@ -83,7 +85,9 @@ export async function lastSeqs(
     .select({
       sectionId: section.id,
       epoch: section.epoch,
-      row: sql<number | null>`(select ${sectionUpdate.seq} from ${sectionUpdate} where ${sectionUpdate.sectionId} = ${section.id}
+      row: sql<
+        number | null
+      >`(select ${sectionUpdate.seq} from ${sectionUpdate} where ${sectionUpdate.sectionId} = ${section.id}
         and ${sectionUpdate.epoch} = ${section.epoch} order by ${sectionUpdate.seq} desc limit 1)`,
       folded: sql<number | null>`(select ${sectionSnapshot.seq} from ${sectionSnapshot}
         where ${sectionSnapshot.sectionId} = ${section.id} and ${sectionSnapshot.epoch} = ${section.epoch})`,
@@ -134,11 +138,7 @@ export async function loadParts(db: Executor, sectionId: string, after = -1): Pr
         .select({ seq: sectionUpdate.seq, update: sectionUpdate.update })
         .from(sectionUpdate)
         .where(
-          and(
-            eq(sectionUpdate.sectionId, sectionId),
-            eq(sectionUpdate.epoch, head.epoch),
-            gt(sectionUpdate.seq, from),
-          ),
+          and(eq(sectionUpdate.sectionId, sectionId), eq(sectionUpdate.epoch, head.epoch), gt(sectionUpdate.seq, from)),
         )
         .orderBy(asc(sectionUpdate.seq))
       return { epoch: head.epoch, seq: rows.at(-1)?.seq ?? from, snapshot: snapshot?.state ?? null, rows }
@@ -301,7 +301,13 @@ export async function compact(
 /** The writing half of `compact`. `state` must hold everything of that epoch at or below `seq`. Returns the rows dropped. */
 export async function saveSnapshot(
   db: Executor,
-  { sectionId, epoch, seq, state, keepDays }: { sectionId: string; epoch: number; seq: number; state: Uint8Array; keepDays: number },
+  {
+    sectionId,
+    epoch,
+    seq,
+    state,
+    keepDays,
+  }: { sectionId: string; epoch: number; seq: number; state: Uint8Array; keepDays: number },
 ): Promise<number> {
   return db.transaction(async (tx) => {
     await tx
@@ -321,14 +327,16 @@ export async function saveSnapshot(
       .where(and(eq(sectionSnapshot.sectionId, sectionId), eq(sectionSnapshot.epoch, epoch)))
     if (!back || back.seq < seq || (back.seq === seq && flaw(back.state) !== null))
       throw new LogUnreadable(sectionId, 'the snapshot just written does not read back')
-    const [result] = await tx.delete(sectionUpdate).where(
-      and(
-        eq(sectionUpdate.sectionId, sectionId),
-        eq(sectionUpdate.epoch, epoch),
-        lte(sectionUpdate.seq, seq),
-        sql`${sectionUpdate.at} < now(3) - interval ${keepDays} day`,
-      ),
-    )
+    const [result] = await tx
+      .delete(sectionUpdate)
+      .where(
+        and(
+          eq(sectionUpdate.sectionId, sectionId),
+          eq(sectionUpdate.epoch, epoch),
+          lte(sectionUpdate.seq, seq),
+          sql`${sectionUpdate.at} < now(3) - interval ${keepDays} day`,
+        ),
+      )
     return result.affectedRows
   })
 }

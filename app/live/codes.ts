@@ -57,7 +57,8 @@ export const SAYS: Record<CloseCode, string> = {
   [CLOSE.gone]: 'This section is gone, or it is not shared with you any more.',
   [CLOSE.notAdmitted]: 'The server took too long to let this page in. It tries again.',
   [CLOSE.epoch]: 'An earlier version of this section was restored. Reload to see it.',
-  [CLOSE.tooBig]: 'That is more than one section can hold (8 MiB or 20,000 objects). Undo the last step or split the section.',
+  [CLOSE.tooBig]:
+    'That is more than one section can hold (8 MiB or 20,000 objects). Undo the last step or split the section.',
   [CLOSE.tooMany]: 'Too much was sent in a short time. The page waits a moment and tries again.',
   [CLOSE.unreadable]: 'The stored section cannot be read. Nothing was changed; ask whoever runs the server.',
   [CLOSE.drain]: 'The server is restarting. The page joins again by itself.',
@@ -77,3 +78,16 @@ export const LIMIT = {
   /** A message longer than this goes in parts of this size. */
   part: 512 << 10,
 } as const
+
+/** What the ticket says (JWT, HS256 with LIVE_SECRET, audience "live"). The sidecar still asks for fresh facts. */
+export type TicketClaims = {
+  section: string
+  epoch: number
+  who: { kind: 'person'; userId: string; sessionId: string } | { kind: 'link'; linkId: string }
+  may: 'write' | 'read'
+  /** Shown to the others; from the account, never from the page. */
+  name: string
+  /** Number of the ink the person draws and points in, stable for a person. */
+  ink: number
+}
+export const AUDIENCE = { ticket: 'live', poke: 'poke' } as const
