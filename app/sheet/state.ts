@@ -73,6 +73,14 @@ export type SheetState = {
   /** Mark-up layer the pen writes to. */
   layerId: string | null
   presenting: boolean
+  /** What the tool in hand asks for next, one sentence; for the status line. */
+  hint?: string | null
+  /** What was just done or refused, for the status line and screen readers; `n` grows so that a repeat is read again. */
+  says?: { text: string; n: number; tone?: 'plain' | 'trouble' } | null
+  /** What the plain mouse wheel does; with Ctrl (or a pinch on a trackpad) it always zooms. */
+  wheel?: 'zoom' | 'pan'
+  /** A pen was used: fingers pan and zoom, only the pen draws (palms rest on the sheet). */
+  penMode?: boolean
 }
 
 /** What tools, panels and commands may do. One object per open sheet. */
@@ -98,13 +106,30 @@ export type Sheet = {
         | 'following'
         | 'layerId'
         | 'presenting'
+        | 'hint'
+        | 'wheel'
+        | 'penMode'
       >
     >,
   ): void
-  /** One undoable step; refused (returns false) without write access. In a case, edits of plain values go to that case (`toCase` edits). */
-  edit(edits: Edit[]): boolean
-  /** Start / replace / finish / drop the gesture in progress. `finish` writes one transaction. */
-  gesture: { start(): void; show(edits: Edit[]): void; finish(): boolean; cancel(): void }
+  /** The stored document alone, without anybody's gesture: what a gesture starts from. */
+  stored(): LiveSection
+  /** Say something in the status line. */
+  say(text: string, tone?: 'plain' | 'trouble'): void
+  /** One undoable step; refused (returns false) without write access. In a case, edits of plain values go to that case
+   * (case-edits.ts). Edits with the same `join` word within a second become one step (nudging). */
+  edit(edits: Edit[], join?: string): boolean
+  /**
+   * Start / replace / finish / drop the gesture in progress. `finish` writes one transaction. Given a function, `show` asks it
+   * again whenever the stored document changes under the gesture: the start is then re-anchored and the total shift kept.
+   */
+  gesture: {
+    readonly active: boolean
+    start(): void
+    show(edits: Edit[] | ((stored: LiveSection) => Edit[])): void
+    finish(): boolean
+    cancel(): void
+  }
   undo(): void
   redo(): void
 }
