@@ -2,6 +2,7 @@ import { once } from 'node:events'
 import { SMTPServer } from 'smtp-server'
 import { afterAll, beforeEach, describe, expect, it } from 'vitest'
 import { closeDatabase, db } from '~/server/db.server'
+import type { Letter } from '~/server/mail/letters.server'
 import { queueMail } from '~/server/mail/queue.server'
 import { BACK_OFF, sendDue } from '~/server/mail/send-due.server'
 import { openTransport, type Transport } from '~/server/mail/transport.server'
@@ -11,13 +12,13 @@ import { cleanDatabase } from '../setup/clean'
 beforeEach(cleanDatabase)
 afterAll(closeDatabase)
 
-const letter = {
+const letter: Letter = {
   kind: 'note',
   to: 'ada@reed.example',
   name: 'Ada',
   subject: 'A drain',
   paragraphs: ['It is in.'],
-} as const
+}
 const later = (minutes: number) => new Date(Date.now() + minutes * 60_000)
 const rows = () => db.select().from(outbox)
 

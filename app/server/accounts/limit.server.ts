@@ -43,3 +43,9 @@ export async function count(limit: Limit): Promise<void> {
 export async function forget(key: string): Promise<void> {
   await db.delete(rateLimit).where(eq(rateLimit.key, key))
 }
+
+/** The words of a "too many tries" refusal, to show beside the form that was kept; any other error is thrown on. */
+export function wordsWhenLimited(error: unknown): string {
+  if (error instanceof AppError && error.code === 'too-many') return error.message
+  throw error
+}

@@ -1,0 +1,89 @@
+import { type FieldMetadata, getFormProps, getInputProps, type SubmissionResult, useForm } from '@conform-to/react'
+import { getZodConstraint, parseWithZod } from '@conform-to/zod/v4'
+import type { ReactNode } from 'react'
+import { Form, useNavigation } from 'react-router'
+import type { z } from 'zod'
+
+/** What every account page's form has: a title, an error for the whole of it, fields, one button, ways onward. */
+export function AccountForm<Schema extends z.ZodObject>({
+  title,
+  lead,
+  schema,
+  result,
+  submit,
+  before,
+  after,
+  children,
+}: {
+  title: string
+  lead?: string
+  schema: Schema
+  result: SubmissionResult<string[]> | null | undefined
+  submit: string
+  before?: ReactNode
+  after?: ReactNode
+  children: (fields: { [Name in keyof z.input<Schema>]-?: FieldMetadata<z.input<Schema>[Name]> }) => ReactNode
+}) {
+  const busy = useNavigation().state === 'submitting'
+  const [form, fields] = useForm<z.input<Schema>, z.output<Schema>, string[]>({
+    lastResult: result,
+    constraint: getZodConstraint(schema),
+    shouldValidate: 'onSubmit',
+    shouldRevalidate: 'onInput',
+    onValidate: ({ formData }) => parseWithZod(formData, { schema }),
+  })
+  return (
+    <Form method="post" {...getFormProps(form)}>
+      <h1>{title}</h1>
+      {lead ? <p>{lead}</p> : null}
+      {before}
+      {form.errors ? (
+        <p role="alert" id={form.errorId}>
+          {form.errors.join(' ')}
+        </p>
+      ) : null}
+      {children(fields as never)}
+      <button type="submit" aria-disabled={busy}>
+        {submit}
+      </button>
+      {after}
+    </Form>
+  )
+}
+
+export function Field({
+  meta,
+  label,
+  type = 'text',
+  autoComplete,
+  hint,
+}: {
+  meta: FieldMetadata<string | undefined>
+  label: string
+  type?: 'text' | 'email' | 'password'
+  autoComplete: string
+  hint?: string
+}) {
+  const { key, ...input } = getInputProps(meta, { type, ariaDescribedBy: hint ? meta.descriptionId : undefined })
+  return (
+    <div>
+      <label htmlFor={meta.id}>{label}</label>
+      <input key={key} {...input} autoComplete={autoComplete} />
+      {hint ? <p id={meta.descriptionId}>{hint}</p> : null}
+      {meta.errors ? <p id={meta.errorId}>{meta.errors.join(' ')}</p> : null}
+    </div>
+  )
+}
+
+export function Notice({ children }: { children: ReactNode }) {
+  return <p role="status">{children}</p>
+}
+
+export function Plain({ title, children }: { title: string; children: ReactNode }) {
+  return (
+    <section>
+      <h1>{title}</h1>
+      {children}
+    </section>
+  )
+}
