@@ -15,4 +15,5 @@ export default [
   route('mailbox', 'routes/mailbox.tsx'),
   route('health', 'routes/health.ts'),
   route('api/auth/*', 'routes/api/auth.ts'),
+  route('api/live-ticket', 'routes/api/live-ticket.ts'),
 ] satisfies RouteConfig

@@ -1,5 +1,5 @@
-import type { Presence } from '~/live'
 import type * as Y from 'yjs'
+import type { Presence } from '~/live'
 import type { LinkState, Peer } from '../state'
 
 /** What is being looked at: a section by a signed-in person, or whatever a read-only link leads to. */

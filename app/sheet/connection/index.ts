@@ -1,0 +1,3 @@
+export { connect } from './connect'
+export { clearLocal, waitingLocally } from './local-store'
+export * from './types'
