@@ -1,0 +1,37 @@
+import { far } from '../start'
+import type { At, Hit, State, Surface } from '../types'
+import { dragging } from './dragging'
+import { marquee } from './marquee'
+
+/** The button is down and nothing has moved yet: a click or the start of a drag. */
+export function pressed(surface: Surface, from: At, hit: Hit | null, back: () => State): State {
+  const { sheet } = surface
+  const { picked } = sheet.get()
+  const already = hit !== null && picked.includes(hit.path)
+
+  // Picked on the press, so that one stroke picks and drags; Shift adds.
+  if (hit && !already && hit.handle?.shape !== 'mid')
+    sheet.set({ picked: from.shift ? [...picked, hit.path] : [hit.path] })
+  else if (!hit && !from.shift && picked.length > 0) sheet.set({ picked: [] })
+
+  return {
+    name: 'pick.pressed',
+    busy: true,
+    move(at) {
+      if (!far(from, at)) return undefined
+      if (!hit) return marquee(surface, from, at, back)
+      if (sheet.get().may !== 'write') {
+        sheet.say('You are reading this section; nothing can be moved from here.', 'trouble')
+        return back()
+      }
+      return dragging(surface, from, at, hit, back)
+    },
+    up() {
+      // A click on one of several picked things: with Shift it drops out, without it stays alone.
+      if (hit && already && hit.handle?.shape !== 'mid')
+        sheet.set({ picked: from.shift ? picked.filter((path) => path !== hit.path) : [hit.path] })
+      return back()
+    },
+    cancel: back,
+  }
+}
