@@ -1,8 +1,11 @@
 import { type FieldMetadata, getFormProps, getInputProps, type SubmissionResult, useForm } from '@conform-to/react'
 import { getZodConstraint, parseWithZod } from '@conform-to/zod/v4'
-import type { ReactNode } from 'react'
+import { createContext, type ReactNode, useContext } from 'react'
 import { Form, useNavigation } from 'react-router'
 import type { z } from 'zod'
+
+const Focus = createContext<string | undefined>(undefined)
+const FocusOn = Focus.Provider
 
 /** What every account page's form has: a title, an error for the whole of it, fields, one button, ways onward. */
 export function AccountForm<Schema extends z.ZodObject>({
@@ -32,17 +35,20 @@ export function AccountForm<Schema extends z.ZodObject>({
     shouldRevalidate: 'onInput',
     onValidate: ({ formData }) => parseWithZod(formData, { schema }),
   })
+  // Without JavaScript the page comes back whole: the browser then puts the focus where the first mistake is.
+  const byName = fields as Record<string, { id: string; errors?: string[] }>
+  const wrong = Object.keys(schema.shape).find((name) => byName[name]?.errors)
   return (
     <Form method="post" {...getFormProps(form)}>
       <h1>{title}</h1>
       {lead ? <p>{lead}</p> : null}
       {before}
       {form.errors ? (
-        <p role="alert" id={form.errorId}>
+        <p role="alert" id={form.errorId} tabIndex={-1} {...{ autoFocus: wrong === undefined }}>
           {form.errors.join(' ')}
         </p>
       ) : null}
-      {children(fields as never)}
+      <FocusOn value={wrong ? byName[wrong]?.id : undefined}>{children(fields as never)}</FocusOn>
       <button type="submit" aria-disabled={busy}>
         {submit}
       </button>
@@ -64,7 +70,9 @@ export function Field({
   autoComplete: string
   hint?: string
 }) {
-  const { key, ...input } = getInputProps(meta, { type, ariaDescribedBy: hint ? meta.descriptionId : undefined })
+  const autoFocus = useContext(Focus) === meta.id
+  const { key, ...rest } = getInputProps(meta, { type, ariaDescribedBy: hint ? meta.descriptionId : undefined })
+  const input = { ...rest, autoFocus }
   return (
     <div>
       <label htmlFor={meta.id}>{label}</label>

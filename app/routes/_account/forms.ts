@@ -23,15 +23,15 @@ export const signInForm = z.object({
 })
 
 export const signUpForm = z.object({
-  name: z
-    .string({ error: 'Enter your name, as it should stand in a title block.' })
-    .trim()
-    .min(1, 'Enter your name, as it should stand in a title block.')
-    .max(120, 'Use at most 120 characters.'),
   practice: z
     .string({ error: 'Name your practice, as it should stand on a drawing.' })
     .trim()
     .min(1, 'Name your practice, as it should stand on a drawing.')
+    .max(120, 'Use at most 120 characters.'),
+  name: z
+    .string({ error: 'Enter your name, as it should stand in a title block.' })
+    .trim()
+    .min(1, 'Enter your name, as it should stand in a title block.')
     .max(120, 'Use at most 120 characters.'),
   email,
   password: newPassword,

@@ -6,10 +6,7 @@ import type { Route } from './+types/reset'
 import { AccountForm, Field, Plain } from './form'
 import { PASSWORD_MIN, resetForm } from './forms'
 
-export const meta: Route.MetaFunction = () => [
-  { title: 'New password · Doab' },
-  { name: 'referrer', content: 'no-referrer' },
-]
+export const meta: Route.MetaFunction = () => [{ title: 'New password · Doab' }]
 
 export function loader({ request }: Route.LoaderArgs) {
   return { token: new URL(request.url).searchParams.get('token') ?? '' }

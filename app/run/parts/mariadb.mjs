@@ -25,7 +25,7 @@ function find(...names) {
 }
 
 /** Gets MariaDB through apt when it is missing; gives the paths of its programs. */
-async function programs() {
+export async function needMariadb() {
   const look = () => ({ server: find('mariadbd'), install: find('mariadb-install-db') })
   let found = look()
   if (!found.server || !found.install) {
@@ -127,7 +127,7 @@ export async function startMariadb({
   every = false,
   settings = [],
 }) {
-  const { server, install } = await programs()
+  const { server, install } = await needMariadb()
   mkdirSync(run, { recursive: true, mode: 0o700 })
   const file = (/** @type {string} */ name) => path.join(run, name)
   const [pidFile, logFile, secretFile] = [file('db.pid'), file('db.log'), file('db.init.sql')]

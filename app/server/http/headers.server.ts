@@ -13,7 +13,10 @@ function liveOrigins(request: Request): string[] {
   return [`ws://${hostname}:${env.REALTIME_PORT}`, `wss://${hostname}:${env.REALTIME_PORT}`]
 }
 
-/** The address holds a token: nothing may pass it on in a Referer, store it or list it. */
+/**
+ * The address holds a token: no other site may be told it in a Referer, no search engine list it. ("no-referrer" would do that
+ * too, but makes browsers send forms with `Origin: null`, which React Router refuses.)
+ */
 const holdsToken = (path: string) => path.startsWith('/s/') || path.startsWith('/reset')
 
 /** Headers of every answer, pages and data alike; the web server writes them. */
@@ -21,7 +24,7 @@ export function commonHeaders(path: string): [string, string][] {
   const headers: [string, string][] = [
     ['x-content-type-options', 'nosniff'],
     ['x-frame-options', 'DENY'],
-    ['referrer-policy', holdsToken(path) ? 'no-referrer' : 'strict-origin-when-cross-origin'],
+    ['referrer-policy', holdsToken(path) ? 'same-origin' : 'strict-origin-when-cross-origin'],
     ['permissions-policy', 'camera=(), microphone=(), geolocation=(), payment=(), usb=()'],
     ['cross-origin-opener-policy', 'same-origin'],
   ]
