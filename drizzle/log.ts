@@ -143,7 +143,7 @@ export async function loadParts(db: Executor, sectionId: string, after = -1): Pr
         .orderBy(asc(sectionUpdate.seq))
       return { epoch: head.epoch, seq: rows.at(-1)?.seq ?? from, snapshot: snapshot?.state ?? null, rows }
     },
-    { isolationLevel: 'repeatable read', accessMode: 'read only', withConsistentSnapshot: true },
+    { isolationLevel: 'repeatable read', accessMode: 'read only' },
   )
 }
 
