@@ -1,4 +1,4 @@
-import { and, asc, eq, gt, inArray, lte, sql } from 'drizzle-orm'
+import { and, asc, eq, gt, inArray, lt, lte, sql } from 'drizzle-orm'
 import * as Y from 'yjs'
 import type { Executor } from './client'
 import { section, sectionSnapshot, sectionUpdate } from './schema'
@@ -310,22 +310,22 @@ export async function saveSnapshot(
   }: { sectionId: string; epoch: number; seq: number; state: Uint8Array; keepDays: number },
 ): Promise<number> {
   return db.transaction(async (tx) => {
-    await tx
-      .insert(sectionSnapshot)
-      .values({ sectionId, epoch, seq, state })
-      .onDuplicateKeyUpdate({
-        // Assigned from left to right: `seq` last, so that the others still compare with the old one.
-        set: {
-          state: sql`if(values(${sectionSnapshot.seq}) > ${sectionSnapshot.seq}, values(${sectionSnapshot.state}), ${sectionSnapshot.state})`,
-          at: sql`if(values(${sectionSnapshot.seq}) > ${sectionSnapshot.seq}, now(3), ${sectionSnapshot.at})`,
-          seq: sql`greatest(${sectionSnapshot.seq}, values(${sectionSnapshot.seq}))`,
-        },
-      })
+    const own = and(eq(sectionSnapshot.sectionId, sectionId), eq(sectionSnapshot.epoch, epoch))
+    const [{ affectedRows: newer }] = await tx
+      .update(sectionSnapshot)
+      .set({ seq, state, at: sql`now(3)` })
+      .where(and(own, lt(sectionSnapshot.seq, seq)))
+    const [{ affectedRows: first }] = newer
+      ? [{ affectedRows: 0 }]
+      : await tx.insert(sectionSnapshot).ignore().values({ sectionId, epoch, seq, state })
     const [back] = await tx
       .select({ seq: sectionSnapshot.seq, state: sectionSnapshot.state })
       .from(sectionSnapshot)
-      .where(and(eq(sectionSnapshot.sectionId, sectionId), eq(sectionSnapshot.epoch, epoch)))
-    if (!back || back.seq < seq || (back.seq === seq && flaw(back.state) !== null))
+      .where(own)
+    const same = back?.seq === seq && Buffer.compare(back.state, state) === 0
+    // Somebody else's may stand there instead if it reaches at least as far and can be read.
+    const asGood = back && back.seq >= seq && flaw(back.state) === null
+    if (newer || first ? !same : !asGood)
       throw new LogUnreadable(sectionId, 'the snapshot just written does not read back')
     const [result] = await tx
       .delete(sectionUpdate)

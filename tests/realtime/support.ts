@@ -10,9 +10,9 @@ import { hashToken, issueLinkTicket, issueTicket } from '~/server/live/issue-tic
 import { connect as connectSheet } from '~/sheet/connection/connect'
 import { NoTicket } from '~/sheet/connection/ticket'
 import type { Connection, ConnectOptions, Ticket } from '~/sheet/connection/types'
-import { freePort } from '../../app/run/parts/ports.mjs'
 import type { PracticeRole } from '../../app/access/acts'
 import { startMariadb } from '../../app/run/parts/mariadb.mjs'
+import { freePort } from '../../app/run/parts/ports.mjs'
 import type { Connection as Db } from '../../drizzle/client'
 import { createLog } from '../../drizzle/log'
 import { migrate } from '../../drizzle/migrate'
@@ -131,7 +131,14 @@ export async function makePractice(db: Db['db']) {
       const id = randomUUID()
       await db
         .insert(link)
-        .values({ id, sectionId, tokenHash: hashToken(token), label: 'For the client', createdBy: principal.userId, expiresAt })
+        .values({
+          id,
+          sectionId,
+          tokenHash: hashToken(token),
+          label: 'For the client',
+          createdBy: principal.userId,
+          expiresAt,
+        })
       return { id, token }
     },
   }
@@ -141,7 +148,16 @@ export type Practice = Awaited<ReturnType<typeof makePractice>>
 // ——— sidecars ———
 
 export async function startSidecar(connection: Db, limits: Partial<Limits> = {}, more: { redisUrl?: string } = {}) {
-  const sidecar = create({ log: process.env.LIVE_LOG ? { info: console.log, warn: console.log, error: console.log, debug: console.log } : undefined, connection, liveSecret: SECRET, appUrl: 'http://localhost:3000', limits, ...more })
+  const sidecar = create({
+    log: process.env.LIVE_LOG
+      ? { info: console.log, warn: console.log, error: console.log, debug: console.log }
+      : undefined,
+    connection,
+    liveSecret: SECRET,
+    appUrl: 'http://localhost:3000',
+    limits,
+    ...more,
+  })
   const port = await sidecar.listen(0, '127.0.0.1')
   return { sidecar, port, url: `ws://127.0.0.1:${port}` } satisfies { sidecar: Sidecar; port: number; url: string }
 }
@@ -255,14 +271,24 @@ export const joined = async (page: Page) => {
   try {
     await until('the page has joined', () => page.state.kind === 'stored')
   } catch (error) {
-    throw new Error(`${String(error)}; it is ${JSON.stringify(page.state)}, closed before with ${page.codes.join(', ')}`)
+    throw new Error(
+      `${String(error)}; it is ${JSON.stringify(page.state)}, closed before with ${page.codes.join(', ')}`,
+    )
   }
 }
 export const map = (page: { doc: Y.Doc }) => page.doc.getMap<unknown>('m')
 
 /** A bare socket, for what no page of ours would send. */
-export async function rawSocket(url: string, sectionId: string, ticket: string | null, options: { origin?: string } = {}) {
-  const socket = new NodeSocket(`${url}/${sectionId}${ticket === null ? '' : `?ticket=${encodeURIComponent(ticket)}`}`, options)
+export async function rawSocket(
+  url: string,
+  sectionId: string,
+  ticket: string | null,
+  options: { origin?: string } = {},
+) {
+  const socket = new NodeSocket(
+    `${url}/${sectionId}${ticket === null ? '' : `?ticket=${encodeURIComponent(ticket)}`}`,
+    options,
+  )
   const frames: Uint8Array[] = []
   const closed = new Promise<{ code: number; reason: string }>((resolve) =>
     socket.once('close', (code, reason) => resolve({ code, reason: reason.toString() })),
