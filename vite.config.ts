@@ -12,7 +12,32 @@ export default defineConfig({
   cacheDir: process.env.DOAB_VAR ? `${process.env.DOAB_VAR}/vite` : undefined,
   // The database writes there all the time.
   server: { watch: { ignored: ['**/var/**', '**/build/**'] } },
-  optimizeDeps: { include: ['konva', 'react-konva', 'yjs', 'y-websocket', 'y-indexeddb', 'mathjs'] },
+  // Found late, each of these would make the development server load the page again under one's hands.
+  optimizeDeps: {
+    include: [
+      '@conform-to/react',
+      '@conform-to/zod/v4',
+      '@tanstack/react-query',
+      'clsx',
+      'd3-scale',
+      'konva',
+      'lib0/decoding',
+      'lib0/encoding',
+      'lib0/indexeddb',
+      'mathjs',
+      'nanoid',
+      'perfect-freehand',
+      'react-aria-components',
+      'react-konva',
+      'y-indexeddb',
+      'y-protocols/awareness',
+      'y-websocket',
+      'yjs',
+      'zod',
+      'zustand',
+      'zustand/vanilla',
+    ],
+  },
   test: {
     projects: [
       {

@@ -29,7 +29,8 @@ export async function shutdown(): Promise<void> {
 
 /** Renders a page: the shell at once, the rest streamed, everything at once for robots. */
 export default function handleRequest(request: Request, status: number, headers: Headers, router: EntryContext) {
-  const nonce = randomBytes(16).toString('base64')
+  // In development no policy asks for it, and the browser hides it from hydration, which would then complain.
+  const nonce = import.meta.env.DEV ? undefined : randomBytes(16).toString('base64')
   headers.set('content-type', 'text/html; charset=utf-8')
   for (const [name, value] of documentHeaders(request, nonce)) if (!headers.has(name)) headers.set(name, value)
   if (request.method === 'HEAD') return new Response(null, { status, headers })

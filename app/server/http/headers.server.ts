@@ -37,9 +37,9 @@ export function commonHeaders(path: string): [string, string][] {
  * Further headers of a page. Scripts run only from our own files or with this page's one-time number; styles may be inline, because
  * drawings carry them. The development server injects scripts of its own, so there the policy stays off.
  */
-export function documentHeaders(request: Request, nonce: string): [string, string][] {
+export function documentHeaders(request: Request, nonce: string | undefined): [string, string][] {
   const headers: [string, string][] = [['cache-control', 'private, no-cache']]
-  if (!production) return headers
+  if (!production || !nonce) return headers
   const policy = [
     "default-src 'self'",
     `script-src 'self' 'nonce-${nonce}'`,
