@@ -1,8 +1,9 @@
 import type { ReactNode } from 'react'
-import { isRouteErrorResponse, Link, Links, Meta, Outlet, Scripts, ScrollRestoration } from 'react-router'
+import { Links, Meta, Outlet, Scripts, ScrollRestoration } from 'react-router'
 import type { Route } from './+types/root'
 import './app.css'
 import { useNonce } from './entry.nonce'
+import { Trouble } from './routes/_public/trouble'
 import { actorMiddleware } from './server/context.server'
 
 export const middleware: Route.MiddlewareFunction[] = [actorMiddleware]
@@ -45,13 +46,5 @@ export default function App() {
 }
 
 export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
-  const status = isRouteErrorResponse(error) ? error.status : 500
-  const message = isRouteErrorResponse(error) ? (error.data?.message ?? error.statusText) : 'Something broke.'
-  return (
-    <main>
-      <h1>{status}</h1>
-      <p>{message}</p>
-      <Link to="/">Back to the start</Link>
-    </main>
-  )
+  return <Trouble error={error} />
 }

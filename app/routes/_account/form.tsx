@@ -41,18 +41,26 @@ export function AccountForm<Schema extends z.ZodObject>({
   return (
     <Form method="post" {...getFormProps(form)}>
       <h1>{title}</h1>
-      {lead ? <p>{lead}</p> : null}
+      {lead ? <p className="account-lead">{lead}</p> : null}
       {before}
       {form.errors ? (
-        <p role="alert" id={form.errorId} tabIndex={-1} {...{ autoFocus: wrong === undefined }}>
+        <p
+          role="alert"
+          className="account-alert"
+          id={form.errorId}
+          tabIndex={-1}
+          {...{ autoFocus: wrong === undefined }}
+        >
           {form.errors.join(' ')}
         </p>
       ) : null}
-      <FocusOn value={wrong ? byName[wrong]?.id : undefined}>{children(fields as never)}</FocusOn>
-      <button type="submit" aria-disabled={busy}>
-        {submit}
+      <FocusOn value={wrong ? byName[wrong]?.id : undefined}>
+        <div className="account-fields">{children(fields)}</div>
+      </FocusOn>
+      <button type="submit" className="account-button" aria-disabled={busy}>
+        {busy ? 'One moment …' : submit}
       </button>
-      {after}
+      <div className="account-onward">{after}</div>
     </Form>
   )
 }
@@ -71,25 +79,41 @@ export function Field({
   hint?: string
 }) {
   const autoFocus = useContext(Focus) === meta.id
-  const { key, ...rest } = getInputProps(meta, { type, ariaDescribedBy: hint ? meta.descriptionId : undefined })
+  const { key, ...rest } = getInputProps(meta, {
+    type,
+    ariaDescribedBy: hint && !meta.errors ? meta.descriptionId : undefined,
+  })
   const input = { ...rest, autoFocus }
   return (
-    <div>
+    <div className="account-field">
       <label htmlFor={meta.id}>{label}</label>
       <input key={key} {...input} autoComplete={autoComplete} />
-      {hint ? <p id={meta.descriptionId}>{hint}</p> : null}
-      {meta.errors ? <p id={meta.errorId}>{meta.errors.join(' ')}</p> : null}
+      {hint && !meta.errors ? (
+        <p className="account-hint" id={meta.descriptionId}>
+          {hint}
+        </p>
+      ) : null}
+      {meta.errors ? (
+        <p className="account-wrong" id={meta.errorId}>
+          {meta.errors.join(' ')}
+        </p>
+      ) : null}
     </div>
   )
 }
 
 export function Notice({ children }: { children: ReactNode }) {
-  return <p role="status">{children}</p>
+  return (
+    <p role="status" className="account-notice">
+      {children}
+    </p>
+  )
 }
 
+/** A page of this group that is read rather than filled in. */
 export function Plain({ title, children }: { title: string; children: ReactNode }) {
   return (
-    <section>
+    <section className="account-plain">
       <h1>{title}</h1>
       {children}
     </section>

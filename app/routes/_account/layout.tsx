@@ -1,9 +1,23 @@
-import { Outlet } from 'react-router'
+import { Link, Outlet } from 'react-router'
+import './account.css'
+import { Brand } from '../_public/brand'
+import { Ground } from './ground'
 
 export default function AccountLayout() {
   return (
-    <main>
-      <Outlet />
-    </main>
+    <div className="account">
+      <div className="account-side">
+        <Link to="/" className="account-brand">
+          <Brand size={30} />
+          Doab
+        </Link>
+        <main className="account-sheet">
+          <Outlet />
+        </main>
+      </div>
+      <div className="account-ground">
+        <Ground />
+      </div>
+    </div>
   )
 }

@@ -1,7 +1,9 @@
-import { Form, redirect } from 'react-router'
+import { Form, Link, redirect } from 'react-router'
 import { auth } from '~/server/auth.server'
 import { personOf } from '~/server/context.server'
 import type { Route } from './+types/sign-out'
+
+export const meta: Route.MetaFunction = () => [{ title: 'Sign out · Doab' }]
 
 export function loader({ context }: Route.LoaderArgs) {
   if (!personOf(context)) throw redirect('/')
@@ -17,7 +19,13 @@ export default function SignOut() {
   return (
     <Form method="post">
       <h1>Sign out</h1>
-      <button type="submit">Sign out</button>
+      <p className="account-lead">What is stored stays stored, and your colleagues draw on.</p>
+      <button type="submit" className="account-button">
+        Sign out
+      </button>
+      <div className="account-onward">
+        <Link to="/home">Stay here</Link>
+      </div>
     </Form>
   )
 }

@@ -1,0 +1,3 @@
+export function Ground() {
+  return null
+}
