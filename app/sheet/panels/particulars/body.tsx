@@ -1,0 +1,54 @@
+import { useSheet, useSheetState } from '../../shell/use-sheet'
+import { SelectField } from '../fields/select-field'
+import { VertexTable } from '../table/vertex-table'
+import { Deeds } from './deeds'
+import { MaterialFields } from './materials'
+import { NameAndNote } from './name-note'
+
+/** A body: what it is made of, that material's values, its outline, and what it lies over. */
+export function BodyParticulars({ id }: { id: string }) {
+  const sheet = useSheet()
+  const may = useSheetState((state) => state.may)
+  const materials = useSheetState((state) => state.live.section.materials)
+  const bodies = useSheetState((state) => state.live.section.bodies)
+  const body = bodies.find((one) => one.id === id)
+  if (!body) return <p className="quiet">It is no longer there.</p>
+  const at = bodies.indexOf(body)
+  const path = `bodies.${id}`
+  return (
+    <div className="particulars">
+      <NameAndNote path={path}>
+        <SelectField
+          label="Material"
+          value={body.material}
+          disabled={may === 'read'}
+          options={materials.map((one) => [one.id, one.name ?? one.id] as const)}
+          onChange={(material) => sheet.edit([{ do: 'set', path: `${path}.material`, value: material }])}
+        />
+        <MaterialFields id={body.material} />
+        {bodies.length > 1 && may === 'write' ? (
+          <div className="buttons">
+            <button
+              type="button"
+              className="button small"
+              disabled={at === bodies.length - 1}
+              onClick={() => sheet.edit([{ do: 'reorder', list: 'bodies', id, after: bodies[at + 1]?.id ?? null }])}
+            >
+              Lay over the next
+            </button>
+            <button
+              type="button"
+              className="button small"
+              disabled={at === 0}
+              onClick={() => sheet.edit([{ do: 'reorder', list: 'bodies', id, after: bodies[at - 2]?.id ?? null }])}
+            >
+              Lay under the last
+            </button>
+          </div>
+        ) : null}
+        <VertexTable line={`bodies.${id}`} />
+      </NameAndNote>
+      <Deeds path={path} />
+    </div>
+  )
+}
