@@ -33,6 +33,8 @@ export type OpenSheet = Sheet & {
   attach(connection: Connection): void
   /** Show the others something of oneself that is no part of the state (pointer, view in metres, laser). */
   present(change: Partial<Omit<Presence, 'who'>>): void
+  /** Oneself, as the server says; null before it has. */
+  me(): Presence['who'] | null
   /** Work out now what waits for the next frame. */
   settle(): void
   /** Stop listening; a gesture in progress is dropped. The connection and the document stay the caller's. */
@@ -83,6 +85,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
     presenting: false,
     hint: null,
     says: null,
+    seen: null,
     wheel: 'pan',
     penMode: false,
     ...options.initial,
@@ -294,6 +297,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
       next.present(Object.fromEntries(SHOWN.map((key) => [key, get()[key]])))
     },
     present: (change) => connection?.present(change),
+    me: () => connection?.who ?? null,
     settle,
     close() {
       gesture.cancel()

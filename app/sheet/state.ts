@@ -77,6 +77,8 @@ export type SheetState = {
   hint?: string | null
   /** What was just done or refused, for the status line and screen readers; `n` grows so that a repeat is read again. */
   says?: { text: string; n: number; tone?: 'plain' | 'trouble' } | null
+  /** The view as it is laid out now, also while `view` is null (the whole strip). Set by the canvas. */
+  seen?: View | null
   /** What the plain mouse wheel does; with Ctrl (or a pinch on a trackpad) it always zooms. */
   wheel?: 'zoom' | 'pan'
   /** A pen was used: fingers pan and zoom, only the pen draws (palms rest on the sheet). */
@@ -109,6 +111,7 @@ export type Sheet = {
         | 'hint'
         | 'wheel'
         | 'penMode'
+        | 'seen'
       >
     >,
   ): void

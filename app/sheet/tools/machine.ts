@@ -7,7 +7,9 @@ export type Machine = {
   down(at: At): void
   move(at: At): void
   up(at: At): void
+  /** The second press of a double click: a plain press where the state knows no other meaning. */
   double(at: At): void
+  doubleUp(at: At): void
   /** True when the tool took the key. */
   key(press: Press): boolean
   /** Escape, a second finger, a lost pointer: whatever was going on leaves nothing behind. */
@@ -69,7 +71,8 @@ export function createMachine(surface: Surface, tool: Tool, changed: (state: Sta
     down: (at) => void walk(() => state.down?.(at)),
     move: (at) => void walk(() => state.move?.(at)),
     up: (at) => void walk(() => state.up?.(at)),
-    double: (at) => void walk(() => state.double?.(at)),
+    double: (at) => void walk(() => (state.double ? state.double(at) : state.down?.(at))),
+    doubleUp: (at) => void walk(() => state.doubleUp?.(at)),
     key: (press) => walk(() => state.key?.(press)),
     cancel: () => walk(() => state.cancel?.()),
   }

@@ -87,7 +87,10 @@ export type State = {
   down?(at: At): State | undefined
   move?(at: At): State | undefined
   up?(at: At): State | undefined
+  /** The second press of a double click, instead of `down`. */
   double?(at: At): State | undefined
+  /** A double click is over and has not become a drag. */
+  doubleUp?(at: At): State | undefined
   /** Answers undefined when the key is not for this state, so that commands get it. */
   key?(press: Press): State | undefined
   cancel?(): State | undefined

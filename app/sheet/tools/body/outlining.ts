@@ -72,13 +72,7 @@ export function outlining(surface: Surface, first: Spot, back: () => State): Sta
       show()
       return undefined
     },
-    double(at) {
-      // The second click of the pair has set a corner on top of the last one.
-      const [a, b] = corners.slice(-2)
-      const scale = surface.scale()
-      if (a && b && Math.hypot((a.x - b.x) / scale.x, (a.z - b.z) / scale.z) < CLOSE[at.kind]) corners.pop()
-      return finish()
-    },
+    double: finish,
     key({ key }) {
       if (key === 'Enter') return finish() ?? this
       if (key !== 'Backspace') return undefined

@@ -8,7 +8,7 @@ export function idle(surface: Surface): State {
   return {
     name: 'pick.idle',
     down: (at) => pressed(surface, at, surface.hit(at), () => idle(surface)),
-    double(at: At) {
+    doubleUp(at: At) {
       const hit = surface.hit(at)
       if (!hit) return undefined
       if (hit.path.startsWith('marks.')) rewrite(surface, hit.path)

@@ -9,9 +9,11 @@ export function pressed(surface: Surface, from: At, hit: Hit | null, back: () =>
   const { picked } = sheet.get()
   const already = hit !== null && picked.includes(hit.path)
 
+  // Ends, levels and edge middles belong to something picked already; they are not things of their own.
+  const thing = hit !== null && (hit.handle === undefined || hit.handle.shape === 'vertex')
+
   // Picked on the press, so that one stroke picks and drags; Shift adds.
-  if (hit && !already && hit.handle?.shape !== 'mid')
-    sheet.set({ picked: from.shift ? [...picked, hit.path] : [hit.path] })
+  if (thing && !already) sheet.set({ picked: from.shift ? [...picked, hit.path] : [hit.path] })
   else if (!hit && !from.shift && picked.length > 0) sheet.set({ picked: [] })
 
   return {
@@ -28,8 +30,7 @@ export function pressed(surface: Surface, from: At, hit: Hit | null, back: () =>
     },
     up() {
       // A click on one of several picked things: with Shift it drops out, without it stays alone.
-      if (hit && already && hit.handle?.shape !== 'mid')
-        sheet.set({ picked: from.shift ? picked.filter((path) => path !== hit.path) : [hit.path] })
+      if (thing && already) sheet.set({ picked: from.shift ? picked.filter((path) => path !== hit.path) : [hit.path] })
       return back()
     },
     cancel: back,
