@@ -1,4 +1,6 @@
-import { useState } from 'react'
+import { useEffect, useState } from 'react'
+import { useLasting } from './shell/lasting'
+import type { LiveSheet } from './shell/open-live'
 import { Room } from './shell/room'
 import { createStillSheet } from './shell/still-sheet'
 import type { First } from './shell/surround'
@@ -13,9 +15,25 @@ export type { First } from './shell/surround'
  */
 export function SheetPage({ first }: { first: First }) {
   const [still] = useState(() => createStillSheet(first))
+  const [live, setLive] = useState<LiveSheet | null>(null)
+  useEffect(() => {
+    let gone = false
+    let close = () => {}
+    // The store, the connection and the canvas come as their own files, after the page can be read.
+    void import('./shell/open-live').then(({ openLive }) => {
+      if (!gone) close = openLive(first, still, setLive)
+    })
+    return () => {
+      gone = true
+      setLive(null)
+      close()
+    }
+  }, [first, still])
+  const sheet = live?.sheet ?? still
+  useLasting(sheet)
   return (
-    <SheetProvider sheet={still}>
-      <Room first={first} />
+    <SheetProvider sheet={sheet}>
+      <Room first={first} live={live} />
     </SheetProvider>
   )
 }

@@ -48,7 +48,7 @@ function SolvedAnswer({ solution }: { solution: Solved }) {
             <Place x={reach.from}>{stretch(reach.from, reach.to, units)}</Place>
           </Line>
         ))}
-        <Line label="Straight line at worst off by">
+        <Line label="Straight line off by">
           <Place x={straight.at}>
             {show(Math.abs(straight.worst), 'length', units)} at {show(straight.at, 'distance', units)}
           </Place>

@@ -70,6 +70,11 @@ export function Ledger() {
         <caption className="sr-only">
           Water balance, {show.unit(per, units)}; plus is into the strip, minus out of it
         </caption>
+        <colgroup>
+          <col className="ledger-label" />
+          <col />
+          <col className="ledger-rate" />
+        </colgroup>
         <thead className="sr-only">
           <tr>
             <th scope="col">Water</th>

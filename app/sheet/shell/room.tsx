@@ -1,6 +1,9 @@
 import { useState } from 'react'
+import { DrawingPlace } from '../canvas/drawing-place'
 import { TableView } from '../panels/table/table-view'
 import { FirstDrawing } from './first-drawing'
+import { barred, Notices } from './notices'
+import type { LiveSheet } from './open-live'
 import { SheetBar } from './sheet-bar'
 import { Side } from './side'
 import type { First } from './surround'
@@ -11,23 +14,37 @@ import { useSheetState } from './use-sheet'
 export type Showing = 'drawing' | 'table'
 
 /** The room the drawing hangs in: bar above, rail below, the side with particulars and answers. */
-export function Room({ first, canvas, onRetry }: { first: First; canvas?: React.ReactNode; onRetry?: () => void }) {
+export function Room({ first, live }: { first: First; live: LiveSheet | null }) {
   const theme = useSheetState((state) => state.theme)
   const may = useSheetState((state) => state.may)
   const presenting = useSheetState((state) => state.presenting)
+  const shut = useSheetState((state) => barred(state.link, first.token !== null))
   const [showing, setShowing] = useState<Showing>('drawing')
+  const drawn = <FirstDrawing svg={first.svg} />
   return (
-    <div className={`sheet-inks inks-${theme} sheet-room`} data-may={may} data-presenting={presenting || undefined}>
-      <TopBar surround={first} onRetry={onRetry} />
+    <div
+      className={`sheet-inks inks-${theme} sheet-room`}
+      data-may={may}
+      data-shut={shut || undefined}
+      data-presenting={presenting || undefined}
+    >
+      <TopBar surround={first} onRetry={live ? () => live.connection.retry() : undefined} />
       <main className="sheet-main" aria-label="Sheet">
-        <SheetBar showing={showing} onShow={setShowing} />
-        <div className="paper" hidden={showing !== 'drawing'}>
-          {canvas ?? <FirstDrawing svg={first.svg} />}
-        </div>
-        {showing === 'table' ? <TableView /> : null}
+        {shut ? null : <SheetBar showing={showing} onShow={setShowing} />}
+        <Notices surround={first} />
+        {shut ? null : (
+          <div className="paper" hidden={showing !== 'drawing'}>
+            {live ? <DrawingPlace sheet={live.sheet} first={drawn} /> : drawn}
+          </div>
+        )}
+        {showing === 'table' && !shut ? <TableView /> : null}
       </main>
-      <ToolRail />
-      <Side />
+      {shut ? null : (
+        <>
+          <ToolRail />
+          <Side />
+        </>
+      )}
     </div>
   )
 }

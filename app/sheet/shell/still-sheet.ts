@@ -1,13 +1,15 @@
 import type { LiveSection } from '~/live'
 import { gatherProblems, readingAt, solveHere } from '../compute'
-import type { Sheet, SheetState } from '../state'
+import type { LinkState, Sheet, SheetState } from '../state'
 import type { First } from './surround'
 
 /**
  * The sheet before its live store is there: on the server, and in the browser until the connection's code has come. It shows the
  * stored section and its answer, lets cases and readings be looked at, and takes no edits.
  */
-export function createStillSheet(first: First): Sheet {
+export type StillSheet = Sheet & { hearLink(link: LinkState): void }
+
+export function createStillSheet(first: First): StillSheet {
   const listeners = new Set<() => void>()
   let state = firstState(first)
   const put = (next: SheetState) => {
@@ -32,6 +34,7 @@ export function createStillSheet(first: First): Sheet {
     say(text, tone = 'plain') {
       put({ ...state, says: { text, tone, n: (state.says?.n ?? 0) + 1 } })
     },
+    hearLink: (link) => put({ ...state, link }),
     edit: () => false,
     gesture: { active: false, start() {}, show() {}, finish: () => false, cancel() {} },
     undo() {},

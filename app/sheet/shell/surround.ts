@@ -12,6 +12,11 @@ export type Surround = {
 export type First = Surround & {
   sectionId: string
   live: LiveSection
+  /**
+   * State of the live document, base64, when the loader sends it along: the sheet then opens before the connection stands. Shared
+   * history with the server's, so that nothing is doubled when the two meet.
+   */
+  state?: string
   /** The drawing as SVG text, made on the server; the canvas takes its place. */
   svg: string
   epoch: number

@@ -1,4 +1,4 @@
-import { useId, useState } from 'react'
+import { useId, useLayoutEffect, useRef, useState } from 'react'
 import type { UnitSet } from '../../state'
 import { editable, type Kind, shapeOf, show } from './quantities'
 import { readQuantity, warmUnits } from './read-quantity'
@@ -28,8 +28,15 @@ export type QuantityFieldProps = {
 export function QuantityField(props: QuantityFieldProps) {
   const { kind, units, value } = props
   const id = useId()
+  const field = useRef<HTMLInputElement>(null)
+  /** Just entered: nothing typed or pressed since. */
+  const entered = useRef(false)
   const [draft, setDraft] = useState<string | null>(null)
   const [wrong, setWrong] = useState<string | null>(null)
+  const editing = draft !== null
+  useLayoutEffect(() => {
+    if (editing && entered.current) field.current?.select()
+  }, [editing])
   const shown = typeof value === 'number' ? show(value, kind, units, !props.bare) : ''
   const release = () => {
     setDraft(null)
@@ -61,6 +68,7 @@ export function QuantityField(props: QuantityFieldProps) {
         {props.label}
       </label>
       <input
+        ref={field}
         id={id}
         className="text-input number-input"
         inputMode="text"
@@ -72,13 +80,18 @@ export function QuantityField(props: QuantityFieldProps) {
         aria-invalid={wrong !== null}
         aria-describedby={wrong ? `${id}-wrong` : undefined}
         value={draft ?? shown}
-        onFocus={(event) => {
+        onFocus={() => {
           warmUnits()
           if (typeof value === 'number') setDraft(editable(value, kind, units))
-          const field = event.currentTarget
-          requestAnimationFrame(() => field.select())
+          entered.current = true
+        }}
+        onClick={(event) => {
+          // The press that brought the focus put the caret somewhere; what one wants is to type over the value.
+          if (entered.current) event.currentTarget.select()
+          entered.current = false
         }}
         onChange={(event) => {
+          entered.current = false
           setDraft(event.target.value)
           setWrong(null)
         }}

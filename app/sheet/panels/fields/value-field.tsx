@@ -32,6 +32,7 @@ export function ValueField({
   const values = paths.map((path, at) => (caseOf && path in caseOf.set ? held(caseOf.set[path]) : drawn[at]))
   const same = values.every((value) => value === values[0])
   const first = paths[0] ?? ''
+  const given = useSheetState((state) => typeof values[0] === 'number' || first in state.live.section.sources)
   return (
     <div className="value-field" data-changed={own.length > 0 || undefined}>
       <QuantityField
@@ -70,6 +71,7 @@ export function ValueField({
         </p>
       ) : null}
       {cell === undefined &&
+      given &&
       paths.length === 1 &&
       spec.field !== 'x' &&
       spec.field !== 'from' &&

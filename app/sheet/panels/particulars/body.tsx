@@ -46,7 +46,10 @@ export function BodyParticulars({ id }: { id: string }) {
             </button>
           </div>
         ) : null}
-        <VertexTable line={`bodies.${id}`} />
+        <details className="fold">
+          <summary>Outline: {body.outline.length} vertices</summary>
+          <VertexTable line={`bodies.${id}`} />
+        </details>
       </NameAndNote>
       <Deeds path={path} />
     </div>
