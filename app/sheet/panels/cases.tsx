@@ -115,7 +115,11 @@ function OneCase({ one }: { one: Case }) {
               <th scope="col">Value</th>
               <th scope="col">here</th>
               <th scope="col">as drawn</th>
-              {write ? <th scope="col" aria-label="Way back" /> : null}
+              {write ? (
+                <th scope="col">
+                  <span className="sr-only">Way back</span>
+                </th>
+              ) : null}
             </tr>
           </thead>
           <tbody>

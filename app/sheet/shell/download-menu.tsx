@@ -41,45 +41,47 @@ export function DownloadMenu({ token }: { token: string | null }) {
       </Button>
       <Popover className={popClass('download-pop')} placement="bottom end">
         <Dialog aria-label="Download">
-          <h2 className="pop-title">Download</h2>
-          <p className="quiet">{caseId ? `With the values of “${caseName ?? caseId}”.` : 'As drawn.'}</p>
-          <fieldset className="paper-choice">
-            <legend>The sheet, drawn to scale</legend>
-            <label>
-              Paper
-              <select value={paper} onChange={(event) => setPaper(event.target.value)}>
-                {PAPERS.map((name) => (
-                  <option key={name} value={name}>
-                    {name} landscape
-                  </option>
-                ))}
-              </select>
-            </label>
-            <label>
-              Scale
-              <select value={scale} onChange={(event) => setScale(event.target.value)}>
-                <option value="">largest that fits</option>
-                {SCALES.map((n) => (
-                  <option key={n} value={n}>
-                    1:{n}
-                  </option>
-                ))}
-              </select>
-            </label>
-            <a className="button solid wide" href={downloadAddress('sheet.svg', from, { paper, scale })} download>
-              Sheet as SVG
+          <section aria-label="What to download">
+            <h2 className="pop-title">Download</h2>
+            <p className="quiet">{caseId ? `With the values of “${caseName ?? caseId}”.` : 'As drawn.'}</p>
+            <fieldset className="paper-choice">
+              <legend>The sheet, drawn to scale</legend>
+              <label>
+                Paper
+                <select value={paper} onChange={(event) => setPaper(event.target.value)}>
+                  {PAPERS.map((name) => (
+                    <option key={name} value={name}>
+                      {name} landscape
+                    </option>
+                  ))}
+                </select>
+              </label>
+              <label>
+                Scale
+                <select value={scale} onChange={(event) => setScale(event.target.value)}>
+                  <option value="">largest that fits</option>
+                  {SCALES.map((n) => (
+                    <option key={n} value={n}>
+                      1:{n}
+                    </option>
+                  ))}
+                </select>
+              </label>
+              <a className="button solid wide" href={downloadAddress('sheet.svg', from, { paper, scale })} download>
+                Sheet as SVG
+              </a>
+            </fieldset>
+            <a className="button wide" href={downloadAddress('profile.csv', from)} download>
+              Water table and discharge as CSV
             </a>
-          </fieldset>
-          <a className="button wide" href={downloadAddress('profile.csv', from)} download>
-            Water table and discharge as CSV
-          </a>
-          <a className="button wide" href={downloadAddress('section.json', from)} download>
-            Section as JSON
-          </a>
-          <p className="caution-line">
-            A screening estimate under the Dupuit–Forchheimer assumptions: no substitute for site investigation, local
-            codes or a licensed professional.
-          </p>
+            <a className="button wide" href={downloadAddress('section.json', from)} download>
+              Section as JSON
+            </a>
+            <p className="caution-line">
+              A screening estimate under the Dupuit–Forchheimer assumptions: no substitute for site investigation, local
+              codes or a licensed professional.
+            </p>
+          </section>
         </Dialog>
       </Popover>
     </DialogTrigger>

@@ -55,43 +55,45 @@ export function People() {
       </Button>
       <Popover className={popClass('people-pop')} placement="bottom end">
         <Dialog aria-label="People on this sheet">
-          <h2 className="pop-title">On this sheet</h2>
-          {others.length === 0 ? <p className="quiet">Nobody else has this section open.</p> : null}
-          <ul className="people-list">
-            {others.map((face) => (
-              <li key={face.id}>
-                <span className="face" data-ink={face.ink % 8} aria-hidden="true">
-                  {initials(face.name)}
-                </span>
-                <span className="person-name">
-                  {face.name}
-                  <small>{face.presenting ? 'presenting' : face.kind === 'link' ? 'by a read-only link' : ''}</small>
-                </span>
-                <button
-                  type="button"
-                  className="button small"
-                  aria-pressed={face.clientId === following}
-                  onClick={() => sheet.set({ following: face.clientId === following ? null : face.clientId })}
-                >
-                  {face.clientId === following ? 'stop following' : 'follow'}
-                </button>
-              </li>
-            ))}
-          </ul>
-          {may === 'write' ? (
-            <button
-              type="button"
-              className="button wide"
-              aria-pressed={presenting}
-              onClick={() => sheet.set({ presenting: !presenting })}
-            >
-              <ShellSymbol name="present" />
-              {presenting ? 'Stop presenting' : 'Present: let the others follow you'}
-            </button>
-          ) : null}
-          <span className="sr-only" role="status">
-            {followed ? `Your view follows ${followed.name}.` : ''}
-          </span>
+          <section aria-label="Who is here">
+            <h2 className="pop-title">On this sheet</h2>
+            {others.length === 0 ? <p className="quiet">Nobody else has this section open.</p> : null}
+            <ul className="people-list">
+              {others.map((face) => (
+                <li key={face.id}>
+                  <span className="face" data-ink={face.ink % 8} aria-hidden="true">
+                    {initials(face.name)}
+                  </span>
+                  <span className="person-name">
+                    {face.name}
+                    <small>{face.presenting ? 'presenting' : face.kind === 'link' ? 'by a read-only link' : ''}</small>
+                  </span>
+                  <button
+                    type="button"
+                    className="button small"
+                    aria-pressed={face.clientId === following}
+                    onClick={() => sheet.set({ following: face.clientId === following ? null : face.clientId })}
+                  >
+                    {face.clientId === following ? 'stop following' : 'follow'}
+                  </button>
+                </li>
+              ))}
+            </ul>
+            {may === 'write' ? (
+              <button
+                type="button"
+                className="button wide"
+                aria-pressed={presenting}
+                onClick={() => sheet.set({ presenting: !presenting })}
+              >
+                <ShellSymbol name="present" />
+                {presenting ? 'Stop presenting' : 'Present: let the others follow you'}
+              </button>
+            ) : null}
+            <span className="sr-only" role="status">
+              {followed ? `Your view follows ${followed.name}.` : ''}
+            </span>
+          </section>
         </Dialog>
       </Popover>
     </DialogTrigger>

@@ -42,7 +42,7 @@ export function Room({ first, live }: { first: First; live: LiveSheet | null }) 
       {shut ? null : (
         <>
           <ToolRail />
-          <Side />
+          <Side table={showing === 'table'} />
         </>
       )}
     </div>

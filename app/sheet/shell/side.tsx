@@ -25,14 +25,15 @@ type Group = (typeof GROUPS)[number][0]
  * Beside the drawing on a wide screen, one below the other; on a tablet one group at a time; on a phone a sheet that rises from
  * the bottom. Which it is, is for the style sheet to say, so that the server's page is right before any script.
  */
-export function Side() {
+export function Side({ table }: { table: boolean }) {
   const [group, setGroup] = useState<Group>('answer')
   const [open, setOpen] = useState(false)
   const picked = useSheetState((state) => state.picked, sameMembers)
   const may = useSheetState((state) => state.may)
   const trouble = useSheetState((state) => state.problems.length)
   const shown = GROUPS.filter(
-    ([name]) => may === 'write' || (name !== 'marks' && name !== 'values') || picked.length > 0,
+    ([name]) =>
+      !(table && name === 'cases') && (may === 'write' || (name !== 'marks' && name !== 'values') || picked.length > 0),
   )
   useEffect(() => {
     if (picked.length > 0) setGroup('values')
@@ -65,8 +66,9 @@ export function Side() {
         </button>
       </div>
       <div className="side-scroll">
+        {/* Readers see the values of what they pick; everything else they read in the table. */}
         <div className="side-group" data-name="values">
-          <Particulars />
+          {may === 'write' || picked.length > 0 ? <Particulars /> : null}
         </div>
         <div className="side-group" data-name="answer">
           <Readings />
@@ -79,8 +81,9 @@ export function Side() {
           <Problems />
           <Footing />
         </div>
+        {/* The table has the cases itself. */}
         <div className="side-group" data-name="cases">
-          <CasePanel />
+          {table ? null : <CasePanel />}
         </div>
         <div className="side-group" data-name="marks">
           <MarkupLayers />

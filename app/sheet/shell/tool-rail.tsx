@@ -15,7 +15,7 @@ export function ToolRail() {
           ({ length }) => length,
         )
   return (
-    <div className="rail-place">
+    <section className="rail-place" aria-label="Tools and mark-up">
       {may === 'write' && MARKING_TOOLS.has(tool) ? <PenChoices /> : null}
       <div
         className="tool-rail"
@@ -51,7 +51,13 @@ export function ToolRail() {
             ))}
           </div>
         ))}
+        {may === 'read' ? (
+          <p className="rail-caution">
+            A screening estimate under the Dupuit–Forchheimer assumptions: no substitute for site investigation, local
+            codes or the judgement of a licensed professional.
+          </p>
+        ) : null}
       </div>
-    </div>
+    </section>
   )
 }
