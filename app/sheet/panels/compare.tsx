@@ -1,4 +1,4 @@
-import { useDeferredValue, useMemo } from 'react'
+import { useEffect, useMemo, useState } from 'react'
 import type { Section } from '~/section'
 import { type Solution, solveSteady } from '~/solver'
 import { useSheet, useSheetState } from '../shell/use-sheet'
@@ -21,12 +21,23 @@ function columnsOf(section: Section): Column[] {
   return columns
 }
 
-/** The key readings of all cases side by side. Drawn after the sheet itself: a drag never waits for it. */
+/** The value once it has not changed for a moment. Solving every case on every frame of a drag would cost the drag its frames. */
+function useSettled<T>(value: T): T {
+  const [settled, setSettled] = useState(value)
+  useEffect(() => {
+    const timer = setTimeout(() => setSettled(value), SETTLE)
+    return () => clearTimeout(timer)
+  }, [value])
+  return settled
+}
+const SETTLE = 250
+
+/** The key readings of all cases side by side. */
 export function CompareCases() {
   const sheet = useSheet()
   const units = useUnits()
   const current = useSheetState((state) => state.caseId)
-  const section = useDeferredValue(useSheetState((state) => state.live.section))
+  const section = useSettled(useSheetState((state) => state.live.section))
   const columns = useMemo(() => columnsOf(section), [section])
   const limits = section.limits
   return (

@@ -1,6 +1,7 @@
 import { Link } from 'react-router'
 import { CLOSE } from '../../live/codes'
 import type { LinkState } from '../state'
+import { saveAsFile } from './save-file'
 import type { Surround } from './surround'
 import { useSheet, useSheetState } from './use-sheet'
 
@@ -16,16 +17,6 @@ export function Notices({ surround }: { surround: Surround }) {
   if (link.kind !== 'refused') return null
   const byLink = surround.token !== null
   const shut = barred(link, byLink)
-  const save = () => {
-    const { section } = sheet.get().live
-    const file = new Blob([JSON.stringify(section, null, 2)], { type: 'application/json' })
-    const address = URL.createObjectURL(file)
-    const anchor = document.createElement('a')
-    anchor.href = address
-    anchor.download = `${section.title.replace(/[^\p{L}\p{N}]+/gu, '-') || 'section'}.json`
-    anchor.click()
-    setTimeout(() => URL.revokeObjectURL(address), 10_000)
-  }
   return (
     <div className={shut ? 'notice gone-notice' : 'notice'} role="alert">
       {shut ? <h2>{byLink ? 'This link leads nowhere any more' : 'Not shared with you'}</h2> : null}
@@ -42,7 +33,7 @@ export function Notices({ surround }: { surround: Surround }) {
           </button>
         ) : null}
         {link.waiting > 0 ? (
-          <button type="button" className="button" onClick={save}>
+          <button type="button" className="button" onClick={() => saveAsFile(sheet.get().live.section)}>
             Save what is here as a file
           </button>
         ) : null}

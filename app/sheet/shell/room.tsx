@@ -2,6 +2,7 @@ import { useState } from 'react'
 import { DrawingPlace } from '../canvas/drawing-place'
 import { TableView } from '../panels/table/table-view'
 import { FirstDrawing } from './first-drawing'
+import { Leftovers } from './leftovers'
 import { barred, Notices } from './notices'
 import type { LiveSheet } from './open-live'
 import { SheetBar } from './sheet-bar'
@@ -32,6 +33,7 @@ export function Room({ first, live }: { first: First; live: LiveSheet | null }) 
       <main className="sheet-main" aria-label="Sheet">
         {shut ? null : <SheetBar showing={showing} onShow={setShowing} />}
         <Notices surround={first} />
+        {live && may === 'write' ? <Leftovers live={live} /> : null}
         {shut ? null : (
           <div className="paper" hidden={showing !== 'drawing'}>
             {live ? <DrawingPlace sheet={live.sheet} first={drawn} /> : drawn}
