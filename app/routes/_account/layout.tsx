@@ -1,11 +1,12 @@
 import { Link, Outlet } from 'react-router'
+import '../_public/inks.css'
 import './account.css'
 import { Brand } from '../_public/brand'
 import { Ground } from './ground'
 
 export default function AccountLayout() {
   return (
-    <div className="account">
+    <div className="inks account">
       <div className="account-side">
         <Link to="/" className="account-brand">
           <Brand size={30} />

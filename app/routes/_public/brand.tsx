@@ -5,12 +5,12 @@ export function Brand({ size = 28 }: { size?: number }) {
       <path
         d="M2 2c4 12 7 18 12 24c5-6 8-12 12-24M14 26v6"
         fill="none"
-        stroke="var(--color-water, #1f6a78)"
+        stroke="var(--water)"
         strokeWidth="3.2"
         strokeLinecap="round"
         strokeLinejoin="round"
       />
-      <path d="M7 3q7 5 14 0l-7 14Z" fill="var(--color-ground, #3e4a2e)" />
+      <path d="M7 3q7 5 14 0l-7 14Z" fill="var(--land)" />
     </svg>
   )
 }

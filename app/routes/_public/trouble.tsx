@@ -1,4 +1,5 @@
 import { isRouteErrorResponse, Link } from 'react-router'
+import './inks.css'
 import './trouble.css'
 
 type Words = { title: string; way: string }
@@ -39,7 +40,7 @@ export function Trouble({ error }: { error: unknown }) {
   const message = sentence(error)
   const stack = import.meta.env.DEV && error instanceof Error ? error.stack : undefined
   return (
-    <main className="trouble">
+    <main className="inks trouble">
       <div className="trouble-sheet">
         <DryHole />
         <div className="trouble-words">
@@ -67,26 +68,21 @@ function DryHole() {
   const ground = Array.from({ length: 37 }, (_, i) => `${i * 20} ${groundAt(i * 20).toFixed(1)}`).join('L')
   return (
     <svg viewBox="0 0 720 190" aria-hidden="true">
-      <g fill="none" stroke="var(--color-base, #5e4b3c)">
-        <path
-          d="M0 152L180 146L420 156L720 148V190H0Z"
-          fill="var(--color-base-fill, #d9cdbb)"
-          stroke="none"
-          opacity="0.7"
-        />
+      <g fill="none" stroke="var(--base)">
+        <path d="M0 152L180 146L420 156L720 148V190H0Z" fill="var(--base-fill)" stroke="none" opacity="0.7" />
         <path d={HATCH.map((x) => `M${x} 190l30 -38`).join('')} strokeWidth="0.8" opacity="0.55" />
         <path d="M0 152L180 146L420 156L720 148" strokeWidth="2" />
       </g>
-      <g fill="none" stroke="var(--color-ground, #3e4a2e)">
+      <g fill="none" stroke="var(--land)">
         <path d={`M${ground}`} strokeWidth="3" />
         <path d={TURF.map((x) => `M${x} ${groundAt(x).toFixed(1)}l-7 9`).join('')} strokeWidth="1" />
       </g>
-      <g fill="none" stroke="var(--color-ink, #1d2b33)" strokeWidth="1.4">
+      <g fill="none" stroke="var(--ink)" strokeWidth="1.4">
         <path d={`M452 ${groundAt(452) - 16}V154M460 ${groundAt(460) - 16}V154M448 ${groundAt(452) - 16}h16`} />
         <path d="M452 118h8M452 130h8M452 142h8" strokeWidth="1" />
-        <path d="M474 136h34" stroke="var(--color-trouble, #a8382b)" />
+        <path d="M474 136h34" stroke="var(--trouble)" />
       </g>
-      <text x="514" y="141" fontSize="15" fontWeight="600" fill="var(--color-trouble, #a8382b)">
+      <text x="514" y="141" fontSize="15" fontWeight="600" fill="var(--trouble)">
         dry
       </text>
     </svg>

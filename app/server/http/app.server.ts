@@ -71,19 +71,24 @@ const limitBody: RequestHandler = (req, res, next) => {
   next()
 }
 
+/** The status an error of express or its parts carries: 404 for a file that is not there, 400 for a malformed address. */
+function statusOf(error: unknown): number {
+  if (error instanceof URIError) return 400
+  if (typeof error !== 'object' || error === null || !('status' in error)) return 500
+  return typeof error.status === 'number' && error.status >= 400 && error.status < 500 ? error.status : 500
+}
+const SAYS: Record<number, string> = { 400: 'This address cannot be read.', 404: 'There is no such file.' }
+
 const onError: ErrorRequestHandler = (error: unknown, req, res, next) => {
-  const status = error instanceof URIError || hasStatus(error, 400) ? 400 : 500
+  const status = statusOf(error)
   if (status === 500) log.error({ err: error, path: loggedPath(req.originalUrl) }, 'request failed')
   if (res.headersSent) next(error)
   else
     res
       .status(status)
       .type('text')
-      .send(status === 400 ? 'This address cannot be read.' : 'Something broke on our side.')
+      .send(SAYS[status] ?? 'Something broke on our side.')
 }
-
-const hasStatus = (error: unknown, status: number) =>
-  typeof error === 'object' && error !== null && 'status' in error && error.status === status
 
 /** The whole web server around a React Router build: files, limits, headers, pages. */
 export function createApp(build: ServerBuild, clientFolder: string) {
