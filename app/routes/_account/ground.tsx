@@ -46,9 +46,14 @@ const sand = range(LEFT + 14, RIGHT - 10, 23).flatMap((x, i) =>
   range(0, 11, 1).map((k) => ({ x: x + (k % 2) * 11, y: 404 + k * 36 + ((i * 7) % 5) })),
 )
 
-export function Ground() {
+/** `wide`: cropped to the strip itself, for a frame that is broader than high. */
+export function Ground({ wide = false }: { wide?: boolean }) {
   return (
-    <svg viewBox={`0 0 ${W} ${H}`} preserveAspectRatio="xMidYMax slice" aria-hidden="true">
+    <svg
+      viewBox={wide ? `0 270 ${W} 560` : `0 0 ${W} ${H}`}
+      preserveAspectRatio={wide ? 'xMidYMid meet' : 'xMidYMax slice'}
+      aria-hidden="true"
+    >
       <path d={`M${table}L${RIGHT} ${H}L${LEFT} ${H}Z`} fill="var(--water-tint)" opacity="0.75" />
       <path d={`M0 ${BASE - STAGE_LEFT}H${LEFT}V${BASE - 70}L60 ${BASE - 36}H0Z`} fill="var(--water)" opacity="0.42" />
       <path
