@@ -1,4 +1,5 @@
 import { Button, Dialog, DialogTrigger, Popover } from 'react-aria-components'
+import { peerInk } from '../canvas/overlay-inks'
 import type { Peer } from '../state'
 import { usePopClass } from './pop'
 import { ShellSymbol } from './symbols'
@@ -33,6 +34,7 @@ export function People() {
   const following = useSheetState((state) => state.following)
   const presenting = useSheetState((state) => state.presenting)
   const may = useSheetState((state) => state.may)
+  const theme = useSheetState((state) => state.theme)
   const popClass = usePopClass()
   const shown = others.slice(0, 4)
   const followed = others.find(({ clientId }) => clientId === following)
@@ -45,7 +47,7 @@ export function People() {
           <span
             key={face.id}
             className="face"
-            data-ink={face.ink % 8}
+            style={{ background: peerInk(theme, face.ink) }}
             data-followed={face.clientId === following || undefined}
           >
             {initials(face.name)}
@@ -61,7 +63,7 @@ export function People() {
             <ul className="people-list">
               {others.map((face) => (
                 <li key={face.id}>
-                  <span className="face" data-ink={face.ink % 8} aria-hidden="true">
+                  <span className="face" style={{ background: peerInk(theme, face.ink) }} aria-hidden="true">
                     {initials(face.name)}
                   </span>
                   <span className="person-name">
