@@ -26,7 +26,8 @@ export function takeTool(
   const shown: { draft: Draft | null; pans: [number, number][] } = { draft: null, pans: [] }
   const answers: (string | null)[] = []
   let catches: (spot: Spot) => Snapped | null = () => null
-  let ids = 0
+  // Far from the ids of the strip (d1, b1 …).
+  let ids = 100
 
   const handles = (): Handle[] => {
     const { picked, live, caseId } = sheet.get()
