@@ -1,33 +1,23 @@
-import { eq } from 'drizzle-orm'
 import { connect } from '../../drizzle/client'
 import { MigrationError, migrate, reason } from '../../drizzle/migrate'
-import { setup } from '../../drizzle/schema'
-import { seed } from '../../drizzle/seed'
+import { demoIsThere, loadDemo } from '../../drizzle/seed/once'
 
 // Run by the starter before anything listens: migrates, and loads the demo once. Its last line on stderr is what the person
 // at the terminal reads when it fails.
 
 const { DATABASE_URL: url = '', DOAB_DEMO: demo = 'load', DOAB_OWN_DATABASE: own } = process.env
-const DEMO = 'demo'
 
-async function loadDemo() {
+async function prepareDemo() {
   const { db, close } = connect(url, { connectionLimit: 4 })
   try {
-    const [there] = await db.select().from(setup).where(eq(setup.name, DEMO))
-    if (demo === 'refuse') {
-      if (there)
-        throw new MigrationError(
-          'This database holds the demo, whose passwords everybody knows. In production give Doab an empty database (DATABASE_URL).',
-        )
-      return
-    }
-    if (there) return
+    const there = await demoIsThere(db)
+    if (demo === 'refuse' && there)
+      throw new MigrationError(
+        'This database holds the demo, whose passwords everybody knows. In production give Doab an empty database (DATABASE_URL).',
+      )
+    if (demo === 'refuse' || there) return
     process.stdout.write('seeding\n')
-    // All of the demo or none of it: the note that it is there is part of the same transaction.
-    await db.transaction(async (tx) => {
-      await tx.insert(setup).values({ name: DEMO })
-      await seed(tx)
-    })
+    await loadDemo(db)
   } finally {
     await close()
   }
@@ -41,7 +31,7 @@ async function main() {
     const { host } = new URL(url)
     throw new MigrationError(`The database at ${host} cannot be reached: ${reason(error)}`)
   }
-  await loadDemo()
+  await prepareDemo()
 }
 
 main().catch((error: unknown) => {

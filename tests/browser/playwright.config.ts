@@ -1,8 +1,7 @@
-import { mkdtempSync } from 'node:fs'
-import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { defineConfig } from '@playwright/test'
 import { freePort } from '../../app/run/parts/ports.mjs'
+import { temporaryFolder } from '../setup/temporary'
 
 // Starts the real thing (npm start's program) on free ports with a data folder of its own, demo loaded. Workers read this file
 // again, so what was chosen the first time is handed to them in the environment.
@@ -12,7 +11,7 @@ const given = env.DOAB_E2E_URL
 if (!given) {
   env.DOAB_E2E_PORT ??= String(await freePort())
   env.DOAB_E2E_REALTIME_PORT ??= String(await freePort())
-  env.DOAB_E2E_VAR ??= mkdtempSync(path.join(tmpdir(), 'doab-e2e-'))
+  env.DOAB_E2E_VAR ??= temporaryFolder('e2e')
 }
 
 const CHROMIUM_ARGS = [

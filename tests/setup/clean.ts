@@ -29,8 +29,8 @@ export async function cleanDatabase(): Promise<void> {
 /** A pool on the shared test database. Close it in afterAll. */
 export const testConnection = (connectionLimit = 5) => connect(url(), { connectionLimit })
 
-/** A migrated, empty database beside the shared one, for a test that needs one to itself (a server process, a restore). */
-export async function ownDatabase(): Promise<{ url: string; drop: () => Promise<void> }> {
+/** A database without any table beside the shared one. */
+export async function emptyDatabase(): Promise<{ url: string; drop: () => Promise<void> }> {
   const name = `doab_test_${crypto.randomUUID().slice(0, 8)}`
   const run = async (sql: string) => {
     const connection = await mysql.createConnection(url())
@@ -43,6 +43,12 @@ export async function ownDatabase(): Promise<{ url: string; drop: () => Promise<
   await run('create database ?? character set utf8mb4 collate utf8mb4_unicode_ci')
   const own = new URL(url())
   own.pathname = `/${name}`
-  await migrate(own.href)
   return { url: own.href, drop: () => run('drop database if exists ??') }
+}
+
+/** A migrated, empty database beside the shared one, for a test that needs one to itself (a server process, a restore). */
+export async function ownDatabase(): Promise<{ url: string; drop: () => Promise<void> }> {
+  const database = await emptyDatabase()
+  await migrate(database.url)
+  return database
 }

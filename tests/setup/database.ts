@@ -1,15 +1,15 @@
-import { mkdtempSync, rmSync } from 'node:fs'
-import { tmpdir } from 'node:os'
+import { rmSync } from 'node:fs'
 import path from 'node:path'
 import { startMariadb } from '../../app/run/parts/mariadb.mjs'
 import { migrate } from '../../drizzle/migrate'
+import { temporaryFolder } from './temporary'
 
 /**
  * Before the integration tests: a MariaDB of their own, on its own port and folder, migrated once; removed afterwards.
  * What the server's modules read from the environment is set here, so a test may import `~/server/…` directly.
  */
 export default async function setup() {
-  const folder = mkdtempSync(path.join(tmpdir(), 'doab-test-'))
+  const folder = temporaryFolder('test')
   const database = await startMariadb({
     data: path.join(folder, 'db'),
     run: path.join(folder, 'run'),

@@ -1,9 +1,9 @@
 import { type ChildProcess, spawn } from 'node:child_process'
-import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs'
-import { tmpdir } from 'node:os'
+import { readdirSync, readFileSync, rmSync } from 'node:fs'
 import path from 'node:path'
 import { setTimeout as wait } from 'node:timers/promises'
 import { freePort } from '../../app/run/parts/ports.mjs'
+import { temporaryFolder } from './temporary'
 
 const ROOT = path.resolve(import.meta.dirname, '../..')
 const UP = 'Ctrl-C stops everything'
@@ -19,7 +19,7 @@ export async function until<T>(what: string, check: () => Promise<T> | T, ms = 6
 
 /** A data folder and two ports that outlive one start, so that a second start can find what the first stored. */
 export async function newPlace() {
-  const folder = mkdtempSync(path.join(tmpdir(), 'doab-run-'))
+  const folder = temporaryFolder('run')
   const [port, realtimePort] = [await freePort(), await freePort()]
   return {
     folder,
