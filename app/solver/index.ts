@@ -1,1 +1,4 @@
+export { readAt } from './steady/read'
+export { type SolveOptions, solveSteady } from './steady/solve'
 export * from './types'
+export { SOLVER_VERSION } from './version'

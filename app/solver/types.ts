@@ -1,4 +1,5 @@
 import type { Problem } from '~/section'
+import type { Inner } from './steady/inner'
 
 /** How the answer was found, with the reason in words for the sheet ("solved exactly: flat base, vertical bands"). */
 export type Method = { kind: 'exact' | 'general'; reason: string }
@@ -149,5 +150,5 @@ export type FootingLine = {
   says: string
 }
 
-/** Private to the solver; see steady/. */
-export type SolvedInner = unknown
+/** Private to the solver (inside/ and footing/ read it): plain data and typed arrays, see steady/inner.ts. */
+export type SolvedInner = Inner

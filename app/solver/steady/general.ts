@@ -1,0 +1,174 @@
+// biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
+import type { Section } from '~/section'
+import { transmissivity } from '../ground/columns'
+import type { Ground } from '../ground/ground'
+import { firstHeads, reachOf } from './guess'
+import { endTransmissivity, headInLink, type Inner, makeInner, REACH } from './inner'
+import { cut, firstCells } from './mesh'
+import { buildNet } from './net'
+import { STATE, solveNet } from './newton'
+
+export type General = {
+  inner: Inner
+  error: { head: number; flow: number; nodes: number; refinements: number }
+  converged: boolean
+}
+
+const FIRST = 48
+const MOST = 6000
+
+/** Head goal, m: 0.01 % of the head range, and never coarser than 1 mm for a range below 10 m. */
+function goalOf(h: Float64Array): number {
+  let low = Number.POSITIVE_INFINITY
+  let high = Number.NEGATIVE_INFINITY
+  for (const head of h) {
+    if (head < low) low = head
+    if (head > high) high = head
+  }
+  return Math.max(1e-4 * (high - low), 1e-6)
+}
+
+/**
+ * How far the head over link j is off because T changes along x within it, m. The cell's own scheme takes the column at mid
+ * length; where T at the ends, at the same heads, differs from it by the factor r, the missing head is ∫ q (1 − 1/r) dx / T.
+ * 0 for one material over a level base, where the scheme is exact. In thin water the whole change of thickness counts.
+ */
+export function linkError(inner: Inner, j: number, goal: number): number {
+  const { net, ground, h } = inner
+  if (net.panel[j]! < 0 || inner.reach[j] === REACH.dry) return 0
+  const hl = h[j]!
+  const hr = h[j + 1]!
+  const drop = net.drop[j]!
+  const sl = hl - net.base[j]!
+  const sr = hr - net.base[j + 1]!
+  if (Math.max(sl, sr) < goal) return 0
+  if (drop !== 0 && Math.min(drop > 0 ? sl : sr, drop > 0 ? sr : sl) < Math.abs(drop) / 2) {
+    return Math.min(Math.abs(sl - sr) / 2, Math.abs(hl - hr))
+  }
+  const own = net.columns
+  if (drop === 0 && own.start[j + 1]! - own.start[j]! === 1) return 0
+  const mid = transmissivity(own, j, (hl + hr) / 2)
+  if (mid <= 0) return Math.abs(hl - hr)
+  const part = (end: 0 | 1, head: number, q: number) => {
+    const here = endTransmissivity(ground, net, j, end, head)
+    const ratio = here > 0 ? transmissivity(own, j, head) / here : 4
+    return q * (1 - Math.min(4, ratio))
+  }
+  const lost = part(0, hl, inner.after[j]!) + part(1, hr, inner.before[j + 1]!)
+  // Opposite ends nearly cancel when T runs straight; what is left of the curvature is the error, their difference a warning.
+  return Math.abs((lost * net.length[j]!) / (6 * mid))
+}
+
+/** Heads of a finer mesh from those of a coarser one: the coarse interpolation at the new nodes. */
+function carry(inner: Inner, parts: Int32Array, nodes: number): Float64Array {
+  const { net, h } = inner
+  const out = new Float64Array(nodes)
+  let at = 0
+  let cell = 0
+  for (let j = 0; j < net.links; j++) {
+    out[at++] = h[j]!
+    if (net.panel[j]! < 0) continue
+    const m = parts[cell++]!
+    for (let i = 1; i < m; i++) out[at++] = headInLink(net, j, i / m, h[j]!, h[j + 1]!, inner.reach[j] === REACH.wet)
+  }
+  out[at] = h[net.nodes - 1]!
+  return out
+}
+
+function partsFor(inner: Inner, errors: Float64Array, total: number, goal: number, level: number): Int32Array {
+  const { net } = inner
+  let cells = 0
+  for (let j = 0; j < net.links; j++) if (net.panel[j]! >= 0) cells++
+  const parts = new Int32Array(cells)
+  const each = goal / (6 * cells)
+  const whole = net.x[net.nodes - 1]! - net.x[0]!
+  let c = 0
+  for (let j = 0; j < net.links; j++) {
+    if (net.panel[j]! < 0) continue
+    let m = total > goal / 3 ? Math.min(8, Math.max(1, Math.ceil(Math.sqrt(errors[j]! / each)))) : 1
+    if (edgeOfReach(inner, j) && net.length[j]! > whole * 2e-5 && level < 5) m = Math.max(m, 4)
+    parts[c++] = m
+  }
+  return parts
+}
+
+/** A link where a wet or dry reach begins or ends. */
+function edgeOfReach(inner: Inner, j: number): boolean {
+  const a = inner.state[j]!
+  const b = inner.state[j + 1]!
+  if (a === b) return false
+  return a === STATE.upper || b === STATE.upper || a === STATE.dry || b === STATE.dry
+}
+
+/** The general path: finite volumes, refined where the link error is large, then halved to estimate the error. */
+export function solveGeneral(section: Section, ground: Ground, options: { nodes?: number } = {}): General {
+  const reach = reachOf(section)
+  const fixed = options.nodes !== undefined
+  let cells = firstCells(ground, fixed ? Math.min(options.nodes ?? FIRST, 250) : FIRST, fixed ? 1 : 2, fixed)
+  let net = buildNet(section, ground, cells)
+  let answer = solveNet(net, firstHeads(net, reach), reach)
+  let inner = makeInner(section, ground, net, answer, false)
+  let refinements = 0
+  const to = (parts: Int32Array) => {
+    cells = cut(cells, parts)
+    net = buildNet(section, ground, cells)
+    answer = solveNet(net, carry(inner, parts, net.nodes), reach)
+    inner = makeInner(section, ground, net, answer, false)
+    refinements++
+  }
+  if (fixed) {
+    const wanted = options.nodes ?? FIRST
+    while (cells.panel.length * 2 <= wanted) {
+      to(new Int32Array(cells.panel.length).fill(Math.min(4, Math.floor(wanted / cells.panel.length))))
+    }
+    return {
+      inner,
+      converged: answer.converged,
+      error: { head: Number.NaN, flow: Number.NaN, nodes: net.nodes, refinements },
+    }
+  }
+  let goal = goalOf(inner.h)
+  let error = { head: Number.NaN, flow: Number.NaN }
+  for (let level = 0; level < 8; level++) {
+    const errors = new Float64Array(net.links)
+    let total = 0
+    for (let j = 0; j < net.links; j++) {
+      errors[j] = linkError(inner, j, goal)
+      total += errors[j]!
+    }
+    const parts = partsFor(inner, errors, total, goal, level)
+    const last = parts.every((m) => m === 1)
+    let size = 0
+    for (let c = 0; c < parts.length; c++) {
+      if (last) parts[c] = 2
+      size += parts[c]!
+    }
+    if (size > MOST) break
+    const coarse = inner
+    to(parts)
+    goal = goalOf(inner.h)
+    error = differences(coarse, inner, parts)
+    if (last && error.head <= goal) break
+  }
+  return { inner, converged: answer.converged, error: { ...error, nodes: net.nodes, refinements } }
+}
+
+/** Between two meshes, at the nodes both have: a third of the head's and flow's largest change (second order), m and m²/d. */
+function differences(coarse: Inner, fine: Inner, parts: Int32Array): { head: number; flow: number } {
+  let head = 0
+  let flow = 0
+  let at = 0
+  let cell = 0
+  for (let j = 0; j <= coarse.net.links; j++) {
+    head = Math.max(head, Math.abs(fine.h[at]! - coarse.h[j]!))
+    if (coarse.reach[j] !== REACH.wet && coarse.reach[j - 1] !== REACH.wet) {
+      flow = Math.max(
+        flow,
+        Math.abs(fine.after[at]! - coarse.after[j]!),
+        Math.abs(fine.before[at]! - coarse.before[j]!),
+      )
+    }
+    at += j < coarse.net.links && coarse.net.panel[j]! >= 0 ? parts[cell++]! : 1
+  }
+  return { head: head / 3, flow: flow / 3 }
+}

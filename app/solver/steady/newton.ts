@@ -1,0 +1,269 @@
+// biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
+import { potential, transmissivity } from '../ground/columns'
+import { solveTridiagonal } from '../linear/tridiagonal'
+import { type Net, sinkFlow, sinkSlope } from './net'
+
+/**
+ * Flow through a link, m²/d, positive to the right, with its slopes in the two heads.
+ *
+ * With P(h) = ∫ T dh of the column at mid length, q = (P(h_left) − P(h_right)) / length. For one material this is the
+ * mid-point scheme T(x_mid, mean head)·Δh/Δx, exact at the nodes over a level base; in level layers it is Girinskii's.
+ * Where the water is thinner than half the drop of the base along the link, the column at mid length no longer knows how
+ * much stands upslope: there the upslope node's own thickness s carries the flow, q = P(base_mid + drop)·2s/drop / length
+ * (for one material K·s·drop/length: flow at normal depth, upstream weighted). Both pieces meet with equal value and, for
+ * one material, equal slope; q never falls with the upslope head nor rises with the downslope head, so the strip has one
+ * answer and a saturated thickness never goes below 0.
+ */
+export const flux = { q: 0, left: 0, right: 0 }
+
+export function linkFlux(net: Net, j: number, hl: number, hr: number): void {
+  const { columns } = net
+  const drop = net.drop[j]!
+  const length = net.length[j]!
+  const top = columns.start[j + 1]! - 1
+  const zTop = columns.z[top]!
+  // The usual case first: both heads in the top layer, and enough water upslope.
+  if (hl > zTop && hr > zTop && Math.abs(drop) <= 2 * (drop > 0 ? hl - net.base[j]! : hr - net.base[j + 1]!)) {
+    const k = columns.k[top]! / length
+    const t = columns.t[top]! / length
+    const dl = hl - zTop
+    const dr = hr - zTop
+    flux.q = (t + (k * (dl + dr)) / 2) * (hl - hr)
+    flux.left = t + k * dl
+    flux.right = -(t + k * dr)
+    return
+  }
+  if (drop >= 0) {
+    side(net, j, hl, hl - net.base[j]!, drop, true)
+    const into = flux.q
+    const slope = flux.left
+    side(net, j, hr, 0, drop, false)
+    flux.q = (into - flux.q) / length
+    flux.right = -flux.left / length
+    flux.left = slope / length
+  } else {
+    side(net, j, hr, hr - net.base[j + 1]!, -drop, true)
+    const into = flux.q
+    const slope = flux.left
+    side(net, j, hl, 0, -drop, false)
+    flux.q = (flux.q - into) / length
+    flux.left = flux.left / length
+    flux.right = -slope / length
+  }
+}
+
+/** One side's share of the flow through a link (times its length) into flux.q, and its slope into flux.left. */
+function side(net: Net, j: number, h: number, s: number, drop: number, upslope: boolean): void {
+  if (upslope && s < drop / 2) {
+    const full = potential(net.columns, j, net.columns.z[net.columns.start[j]!]! + drop)
+    const rate = (2 * full) / drop
+    flux.q = s > 0 ? rate * s : 0
+    flux.left = rate
+    return
+  }
+  flux.q = potential(net.columns, j, h)
+  flux.left = transmissivity(net.columns, j, h)
+}
+
+/** How a node stands: free, held down at `upper`, or dry on the base with more asked of it than comes. */
+export const STATE = { free: 0, upper: 1, dry: 2, held: 3 } as const
+
+export type NetAnswer = {
+  h: Float64Array
+  /** Flow through each link at mid length, m²/d. */
+  q: Float64Array
+  state: Uint8Array
+  /**
+   * What a node's own balance leaves over, m²/d: at `upper` minus this is the seepage, at `dry` this is what is asked and does
+   * not come, at `held` minus this is what the water takes.
+   */
+  rest: Float64Array
+  converged: boolean
+  iterations: number
+}
+
+type Work = { n: number; lower: Float64Array; diagonal: Float64Array; upper: Float64Array; right: Float64Array }
+let work: Work | null = null
+function workspace(n: number): Work {
+  if (!work || work.n < n) {
+    const room = Math.max(512, n * 2)
+    const make = () => new Float64Array(room)
+    work = { n: room, lower: make(), diagonal: make(), upper: make(), right: make() }
+  }
+  return work
+}
+
+const DRY = 1e-9
+
+/** Flows, balances and states at the present heads. Returns the worst balance of the nodes that are free, m²/d. */
+function balance(net: Net, h: Float64Array, q: Float64Array, rest: Float64Array, state: Uint8Array, w: Work): number {
+  const { nodes, links } = net
+  for (let i = 0; i < nodes; i++) {
+    rest[i] = sinkFlow(net, i, h[i]!) - net.supply[i]!
+    w.diagonal[i] = sinkSlope(net, i, h[i]!)
+  }
+  for (let j = 0; j < links; j++) {
+    linkFlux(net, j, h[j]!, h[j + 1]!)
+    q[j] = flux.q
+    rest[j] = rest[j]! + flux.q
+    rest[j + 1] = rest[j + 1]! - flux.q
+    w.diagonal[j] = w.diagonal[j]! + flux.left
+    w.diagonal[j + 1] = w.diagonal[j + 1]! - flux.right
+    w.upper[j] = flux.right
+    w.lower[j + 1] = -flux.left
+  }
+  let worst = 0
+  for (let i = 0; i < nodes; i++) {
+    const r = rest[i]!
+    const s = h[i]! - net.base[i]!
+    let now: number = STATE.free
+    if (!Number.isNaN(net.held[i]!)) now = STATE.held
+    else if (h[i]! >= net.upper[i]! && r < 0) now = STATE.upper
+    else if (s <= 0 && r >= 0) now = STATE.dry
+    else if (Math.abs(r) > worst) worst = Math.abs(r)
+    state[i] = now
+  }
+  return worst
+}
+
+/** Flow that matters in this strip, m²/d: the yardstick for closing the balance. */
+function flowScale(net: Net, q: Float64Array): number {
+  let scale = 0
+  for (let i = 0; i < net.nodes; i++) {
+    scale = Math.max(scale, Math.abs(net.supply[i]!))
+    if (net.sink[i] === 3) scale = Math.max(scale, Math.abs(net.sinkG[i]!))
+  }
+  for (let j = 0; j < net.links; j++) scale = Math.max(scale, Math.abs(q[j]!))
+  return scale
+}
+
+/**
+ * Newton with the exact tridiagonal matrix on the free nodes. Upper and lower bounds by an active set: a node is set free as
+ * soon as its own balance pulls it off its bound. A thickness falls by at most a factor 20 and rises by at most `reach` in a
+ * step, so a bad guess is walked down from above. `step` (time steps without physical meaning) damps what will not settle.
+ */
+export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswer {
+  const { nodes } = net
+  const h = Float64Array.from(guess)
+  for (let i = 0; i < nodes; i++) {
+    const held = net.held[i]!
+    if (!Number.isNaN(held)) h[i] = held
+    else h[i] = Math.max(net.base[i]!, Math.min(h[i]!, net.upper[i]!))
+  }
+  const q = new Float64Array(net.links)
+  const rest = new Float64Array(nodes)
+  const state = new Uint8Array(nodes)
+  const before = new Float64Array(nodes)
+  let iterations = 0
+  const run = (limit: number, per: number): boolean => {
+    let settled = 0
+    for (let k = 0; k < limit; k++) {
+      iterations++
+      const moved = iterate(net, h, q, rest, state, reach, per, before)
+      if (moved.step <= 1e-11 * reach && moved.worst <= 1e-10 * moved.scale + moved.floor) return true
+      // Rounding floor: the step no longer shrinks although the balance is closed.
+      if (moved.step <= 1e-8 * reach && moved.worst <= 1e-9 * moved.scale + moved.floor && ++settled >= 3) return true
+    }
+    return false
+  }
+  let converged = run(40, 0)
+  if (!converged) {
+    // Walk there in time: each step is an easier problem; the steps grow until they no longer matter.
+    let rate = 1
+    for (let k = 0; k < 90 && !converged; k++) {
+      before.set(h)
+      const ok = run(12, rate)
+      if (ok) rate /= 6
+      else {
+        rate *= 20
+        h.set(before)
+      }
+      if (ok && rate < 1e-9) {
+        before.set(h)
+        converged = run(60, 0)
+        if (!converged) h.set(before)
+        if (rate < 1e-16) break
+      }
+    }
+  }
+  balance(net, h, q, rest, state, workspace(nodes))
+  return { h, q, state, rest, converged, iterations }
+}
+
+/** Largest step (m), worst balance, flow that matters and rounding of the flows (m²/d). */
+type Moved = { step: number; worst: number; scale: number; floor: number }
+const moved: Moved = { step: 0, worst: 0, scale: 0, floor: 0 }
+
+function iterate(
+  net: Net,
+  h: Float64Array,
+  q: Float64Array,
+  rest: Float64Array,
+  state: Uint8Array,
+  reach: number,
+  per: number,
+  before: Float64Array,
+): Moved {
+  const { nodes } = net
+  const w = workspace(nodes)
+  moved.worst = balance(net, h, q, rest, state, w)
+  moved.scale = flowScale(net, q)
+  if (per > 0) {
+    // S/Δt per node; the balance to close then holds the storage too.
+    let worst = 0
+    for (let i = 0; i < nodes; i++) {
+      const storage = per * Math.max(net.width[i]!, 1e-9)
+      const change = storage * (h[i]! - before[i]!)
+      const r = rest[i]! + change
+      rest[i] = r
+      w.diagonal[i] = w.diagonal[i]! + storage
+      if (state[i] === STATE.held) continue
+      const s = h[i]! - net.base[i]!
+      if (h[i]! >= net.upper[i]! && r < 0) state[i] = STATE.upper
+      else if (s <= 0 && r >= 0) state[i] = STATE.dry
+      else {
+        state[i] = STATE.free
+        if (Math.abs(r) > worst) worst = Math.abs(r)
+      }
+    }
+    moved.worst = worst
+  }
+  let diagonal = 0
+  for (let i = 0; i < nodes; i++) if (w.diagonal[i]! > diagonal) diagonal = w.diagonal[i]!
+  const floor = diagonal * 1e-14 + 1e-300
+  moved.floor = diagonal * reach * 1e-15
+  for (let i = 0; i < nodes; i++) {
+    if (state[i] === STATE.free) {
+      w.right[i] = -rest[i]!
+      w.diagonal[i] = w.diagonal[i]! + floor
+      if (i === 0) w.lower[i] = 0
+      if (i === nodes - 1) w.upper[i] = 0
+    } else {
+      w.right[i] = 0
+      w.diagonal[i] = 1
+      w.lower[i] = 0
+      w.upper[i] = 0
+    }
+  }
+  solveTridiagonal(nodes, w.lower, w.diagonal, w.upper, w.right)
+  let step = 0
+  for (let i = 0; i < nodes; i++) {
+    if (state[i] !== STATE.free) continue
+    const old = h[i]!
+    const s = old - net.base[i]!
+    let delta = w.right[i]!
+    if (!(delta < reach)) delta = reach
+    if (delta < 0) {
+      const least = s < DRY ? -s : -0.95 * s
+      if (delta < least) delta = least
+    }
+    let next = old + delta
+    if (next > net.upper[i]!) next = net.upper[i]!
+    if (next < net.base[i]!) next = net.base[i]!
+    h[i] = next
+    const size = Math.abs(next - old)
+    if (size > step) step = size
+  }
+  moved.step = step
+  return moved
+}
