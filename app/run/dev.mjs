@@ -48,7 +48,6 @@ await command(async () => {
         ],
         env,
         logs,
-        whole: true,
       }),
     )
     if (existsSync(path.join(ROOT, BUNDLES.realtime))) {
@@ -60,7 +59,6 @@ await command(async () => {
           args: ['--enable-source-maps', path.join(out, 'realtime/main.js')],
           env,
           logs,
-          whole: true,
         })
       let turn = Promise.resolve()
       await watchRealtime(out, () => {

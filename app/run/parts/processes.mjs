@@ -44,10 +44,10 @@ function shown(line) {
 /**
  * Starts a node program on the leash, in a process group of its own, its output in a log file and what matters of it on the
  * terminal.
- * @param {{ name: string, args: string[], env: NodeJS.ProcessEnv, logs: string, whole?: boolean }} options `whole`: show all
+ * @param {{ name: string, args: string[], env: NodeJS.ProcessEnv, logs: string }} options
  * @returns {Started}
  */
-export function startProcess({ name, args, env, logs, whole = false }) {
+export function startProcess({ name, args, env, logs }) {
   const child = spawn(process.execPath, ['--import', LEASH, ...args], {
     cwd: ROOT,
     env,
@@ -59,7 +59,7 @@ export function startProcess({ name, args, env, logs, whole = false }) {
     if (!stream) continue
     createInterface({ input: stream }).on('line', (line) => {
       file.write(`${line}\n`)
-      const text = whole ? line : shown(line)
+      const text = shown(line)
       if (text !== null) process.stdout.write(`${dim(name.padEnd(4))}  ${text}\n`)
     })
   }
