@@ -9,12 +9,9 @@ export function AskText({ asking }: { asking: Asking }) {
   useEffect(() => {
     const element = field.current
     if (!element) return
-    // The press that opened the slip would otherwise take the focus away again.
-    const frame = requestAnimationFrame(() => {
-      element.focus()
-      element.select()
-    })
-    return () => cancelAnimationFrame(frame)
+    // Opened when the press is over, so nothing takes the focus away again.
+    element.focus()
+    element.select()
   }, [])
   const answer = (text: string | null) => {
     if (done.current) return
