@@ -1,4 +1,3 @@
-import { existsSync } from 'node:fs'
 import path from 'node:path'
 import { pathToFileURL } from 'node:url'
 import { ROOT } from './parts/places.mjs'
@@ -34,9 +33,7 @@ export function bundleOptions(name, out = path.join(ROOT, 'build')) {
 /** @param {(keyof typeof BUNDLES)[]} names @param {string} [out] */
 export async function bundle(names, out) {
   const { build } = await import('esbuild')
-  await Promise.all(
-    names.filter((n) => existsSync(path.join(ROOT, BUNDLES[n]))).map((n) => build(bundleOptions(n, out))),
-  )
+  await Promise.all(names.map((name) => build(bundleOptions(name, out))))
 }
 
 if (process.argv[1] && import.meta.url === pathToFileURL(process.argv[1]).href)

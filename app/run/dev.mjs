@@ -1,12 +1,11 @@
-import { existsSync } from 'node:fs'
 import path from 'node:path'
-import { setTimeout as wait } from 'node:timers/promises'
-import { BUNDLES, bundle, bundleOptions } from './bundle.mjs'
+import { bundle, bundleOptions } from './bundle.mjs'
+import { greet } from './parts/greeting.mjs'
 import { installPackages } from './parts/packages.mjs'
 import { ROOT } from './parts/places.mjs'
 import { prepareDatabase } from './parts/prepare.mjs'
 import { startProcess, waitHealthy } from './parts/processes.mjs'
-import { bold, command, say } from './parts/say.mjs'
+import { command, say } from './parts/say.mjs'
 import { runStack } from './parts/stack.mjs'
 
 // npm run dev: the app with hot reload, the sidecar restarted on every change, a database of this clone's own.
@@ -50,28 +49,27 @@ await command(async () => {
         logs,
       }),
     )
-    if (existsSync(path.join(ROOT, BUNDLES.realtime))) {
-      /** @type {import('./parts/processes.mjs').Started | null} */
-      let sidecar = null
-      const start = () =>
-        startProcess({
-          name: 'live',
-          args: ['--enable-source-maps', path.join(out, 'realtime/main.js')],
-          env,
-          logs,
-        })
-      let turn = Promise.resolve()
-      await watchRealtime(out, () => {
-        // One after the other: the old one must let go of the port first. A sidecar that falls waits for the next change.
-        turn = turn.then(async () => {
-          await sidecar?.stop()
-          sidecar = start()
-        })
+    /** @type {import('./parts/processes.mjs').Started | null} */
+    let sidecar = null
+    const start = () =>
+      startProcess({
+        name: 'live',
+        args: ['--enable-source-maps', path.join(out, 'realtime/main.js')],
+        env,
+        logs,
       })
-      process.once('exit', () => void sidecar?.stop())
-    }
+    let turn = Promise.resolve()
+    await watchRealtime(out, () => {
+      // One after the other: the old one must let go of the port first. A sidecar that falls waits for the next change.
+      turn = turn.then(async () => {
+        await sidecar?.stop()
+        sidecar = start()
+      })
+    })
+    process.once('exit', () => void sidecar?.stop())
+
     const why = await waitHealthy(`http://127.0.0.1:${settings.port}/health`, web, 90_000)
-    await wait(200)
-    say(why ? `The web app does not answer yet (${why}).` : `Doab is at ${bold(settings.appUrl)}`)
+    if (why) say(`The web app does not answer yet (${why}).`)
+    else greet(settings)
   })
 })

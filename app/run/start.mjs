@@ -1,11 +1,11 @@
-import { existsSync, readFileSync } from 'node:fs'
 import path from 'node:path'
 import { buildIfChanged } from './parts/build.mjs'
+import { greet } from './parts/greeting.mjs'
 import { installPackages } from './parts/packages.mjs'
 import { ROOT } from './parts/places.mjs'
 import { prepareDatabase } from './parts/prepare.mjs'
 import { startProcess, waitHealthy } from './parts/processes.mjs'
-import { bold, command, Failure, say } from './parts/say.mjs'
+import { command, Failure } from './parts/say.mjs'
 import { runStack } from './parts/stack.mjs'
 
 // npm start: everything from a bare clone to a running Doab. Written in plain JavaScript without packages, because it runs
@@ -29,14 +29,6 @@ await command(async () => {
     if (liveWhy)
       throw new Failure(`The live connection does not come up: ${liveWhy}. Its log: ${path.join(logs, 'live.log')}`)
 
-    say(`Doab is at ${bold(settings.appUrl)}`)
-    const demo = path.join(ROOT, 'drizzle/seed/people.json')
-    if (!settings.real && existsSync(demo)) {
-      /** @type {{ password: string, people: { name: string, email: string, role: string }[] }} */
-      const { password, people } = JSON.parse(readFileSync(demo, 'utf8'))
-      say(`Demo accounts, all with the password ${bold(password)}:`)
-      for (const { name, email, role } of people) say(`  ${email.padEnd(34)} ${name}, ${role}`)
-    }
-    say('Ctrl-C stops everything.')
+    greet(settings)
   })
 })

@@ -1,3 +1,4 @@
+import AxeBuilder from '@axe-core/playwright'
 import { expect, test } from '@playwright/test'
 
 const PASSWORD = 'seven herons standing'
@@ -94,3 +95,26 @@ test('pages run under the content security policy without a complaint', async ({
   }
   expect(complaints).toEqual([])
 })
+
+for (const colorScheme of ['light', 'dark'] as const)
+  test(`pages for people who are not signed in are accessible and fit every width (${colorScheme})`, async ({
+    browser,
+  }) => {
+    const context = await browser.newContext({ colorScheme })
+    const page = await context.newPage()
+    for (const path of ['/', '/sign-in', '/sign-up', '/forgot', '/reset', '/mailbox', '/nothing-here']) {
+      await page.goto(path)
+      const { violations } = await new AxeBuilder({ page }).analyze()
+      expect(
+        violations.map(({ id, nodes }) => `${path} ${id}: ${nodes.map((node) => node.target).join(', ')}`),
+      ).toEqual([])
+      for (const width of [1440, 1024, 390]) {
+        await page.setViewportSize({ width, height: 844 })
+        const over = await page.evaluate(
+          () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
+        )
+        expect(over, `${path} at ${width}`).toBeLessThanOrEqual(0)
+      }
+    }
+    await context.close()
+  })

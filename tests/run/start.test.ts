@@ -117,6 +117,35 @@ describe('npm start', () => {
   )
 })
 
+describe('npm start for real people', () => {
+  it(
+    'runs on secrets of one’s own, without the demo, without a mailbox and behind https',
+    async () => {
+      const real = await newPlace()
+      const attempt = startStack(real, {
+        NODE_ENV: 'production',
+        APP_URL: 'https://doab.office.example',
+        AUTH_SECRET: 'a secret of the office itself, long enough',
+        LIVE_SECRET: 'another secret of the office, also long enough',
+      })
+      try {
+        await attempt.up()
+        expect(attempt.output()).not.toContain('Demo accounts')
+        expect((await fetch(`${real.url}/mailbox`)).status).toBe(404)
+        const page = await fetch(`${real.url}/sign-in`)
+        expect(page.headers.get('strict-transport-security')).toContain('max-age')
+        expect(page.headers.get('content-security-policy')).toContain("frame-ancestors 'none'")
+        const signed = await signUp(real, 'ada@reed.example')
+        expect(signed.headers.get('set-cookie')).toMatch(/^__Secure-.*; Secure/i)
+      } finally {
+        await attempt.stop()
+        real.remove()
+      }
+    },
+    BUILDING,
+  )
+})
+
 describe('npm start says in one line what is wrong', () => {
   let other: Place
   let taken: Server | null = null

@@ -27,6 +27,8 @@ export function readSettings() {
     realtimePort,
     appUrl,
     database,
+    /** Reached from elsewhere, not only from this machine. */
+    open,
     /** For real people: no demo, secrets of one's own. */
     real: production && open,
     /** A machine of one's own: /mailbox may be shown. */
