@@ -5,6 +5,8 @@ import type { Actor } from '~/access/facts.server'
 import { member, organization } from '../../drizzle/schema'
 import { auth } from './auth.server'
 import { db } from './db.server'
+import { AppError } from './errors.server'
+import { databaseAnswers } from './health.server'
 import { clientAddress } from './http/address.server'
 
 export type Membership = { id: string; name: string; slug: string; role: PracticeRole }
@@ -64,7 +66,10 @@ type MiddlewareArgs = { request: Request; context: Readonly<RouterContextProvide
 
 /** Root middleware: puts the person into the context before any loader or action runs. */
 export async function actorMiddleware({ request, context }: MiddlewareArgs, next: () => Promise<Response>) {
-  const { person, headers } = await readPerson(request)
+  const { person, headers } = await readPerson(request).catch(async (error: unknown) => {
+    if (await databaseAnswers()) throw error
+    throw new AppError('unavailable', 'The database does not answer.')
+  })
   context.set(actorContext, person)
   const response = await next()
   // An action that signed somebody in or out has set its own cookie; a renewal must not overwrite it.

@@ -8,10 +8,12 @@ export default function AccountLayout() {
   return (
     <div className="inks account">
       <div className="account-side">
-        <Link to="/" className="account-brand">
-          <Brand size={30} />
-          Doab
-        </Link>
+        <header>
+          <Link to="/" className="account-brand">
+            <Brand size={30} />
+            Doab
+          </Link>
+        </header>
         <main className="account-sheet">
           <Outlet />
         </main>

@@ -95,7 +95,7 @@ export function Legend() {
           <svg viewBox="0 0 64 48" aria-hidden="true">
             {symbol}
           </svg>
-          <h3>{title}</h3>
+          <h2>{title}</h2>
           <p>{words}</p>
         </li>
       ))}
