@@ -75,19 +75,35 @@ function carry(inner: Inner, parts: Int32Array, nodes: number): Float64Array {
   return out
 }
 
-function partsFor(inner: Inner, errors: Float64Array, total: number, goal: number, level: number): Int32Array {
+function partsFor(inner: Inner, errors: Float64Array, total: number, goal: number): Int32Array {
   const { net } = inner
   let cells = 0
   for (let j = 0; j < net.links; j++) if (net.panel[j]! >= 0) cells++
   const parts = new Int32Array(cells)
   const each = goal / (6 * cells)
   const whole = net.x[net.nodes - 1]! - net.x[0]!
+  const size = new Float64Array(net.links)
+  for (let j = 0; j < net.links; j++) {
+    const m = total > goal / 3 ? Math.min(8, Math.max(1, Math.ceil(Math.sqrt(errors[j]! / each)))) : 1
+    size[j] = net.length[j]! / m
+    if (net.panel[j]! < 0 || !edgeOfReach(inner, j)) continue
+    if (net.length[j]! > whole * 1e-7 && Math.abs(inner.h[j]! - inner.h[j + 1]!) > goal / 2)
+      size[j] = net.length[j]! / 8
+  }
+  // A reach may end a little beyond where the coarse mesh put it: cells grow no faster than 3-fold away from its end.
+  for (let j = 0; j < net.links; j++) {
+    if (net.panel[j]! < 0 || !edgeOfReach(inner, j)) continue
+    for (const way of [-1, 1]) {
+      let most = size[j]!
+      for (let i = j + way; i >= 0 && i < net.links && net.length[i]! > most; i += way) {
+        most *= 3
+        if (size[i]! > most) size[i] = most
+      }
+    }
+  }
   let c = 0
   for (let j = 0; j < net.links; j++) {
-    if (net.panel[j]! < 0) continue
-    let m = total > goal / 3 ? Math.min(8, Math.max(1, Math.ceil(Math.sqrt(errors[j]! / each)))) : 1
-    if (edgeOfReach(inner, j) && net.length[j]! > whole * 2e-5 && level < 5) m = Math.max(m, 4)
-    parts[c++] = m
+    if (net.panel[j]! >= 0) parts[c++] = Math.min(64, Math.max(1, Math.round(net.length[j]! / size[j]!)))
   }
   return parts
 }
@@ -136,7 +152,7 @@ export function solveGeneral(section: Section, ground: Ground, options: { nodes?
       errors[j] = linkError(inner, j, goal)
       total += errors[j]!
     }
-    const parts = partsFor(inner, errors, total, goal, level)
+    const parts = partsFor(inner, errors, total, goal)
     const last = parts.every((m) => m === 1)
     let size = 0
     for (let c = 0; c < parts.length; c++) {

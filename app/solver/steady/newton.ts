@@ -1,5 +1,5 @@
 // biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
-import { potential, transmissivity } from '../ground/columns'
+import { headOfPotential, potential, transmissivity } from '../ground/columns'
 import { solveTridiagonal } from '../linear/tridiagonal'
 import { type Net, sinkFlow, sinkSlope } from './net'
 
@@ -93,7 +93,8 @@ function workspace(n: number): Work {
   return work
 }
 
-const DRY = 1e-9
+/** Below this share of `reach` a falling thickness goes to 0 at once. */
+const DRY = 1e-5
 
 /** Flows, balances and states at the present heads. Returns the worst balance of the nodes that are free, m²/d. */
 function balance(net: Net, h: Float64Array, q: Float64Array, rest: Float64Array, state: Uint8Array, w: Work): number {
@@ -161,6 +162,8 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
       iterations++
       const moved = iterate(net, h, q, rest, state, reach, per, before)
       if (moved.step <= 1e-11 * reach && moved.worst <= 1e-10 * moved.scale + moved.floor) return true
+      // No step left that a number of this size can show: the flows' own rounding is all that remains.
+      if (moved.step <= 1e-13 * reach && moved.worst <= 1e-7 * moved.scale) return true
       // Rounding floor: the step no longer shrinks although the balance is closed.
       if (moved.step <= 1e-8 * reach && moved.worst <= 1e-9 * moved.scale + moved.floor && ++settled >= 3) return true
     }
@@ -168,21 +171,24 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
   }
   let converged = run(40, 0)
   if (!converged) {
-    // Walk there in time: each step is an easier problem; the steps grow until they no longer matter.
-    let rate = 1
-    for (let k = 0; k < 90 && !converged; k++) {
+    // Walk there in time from the guess: each step is an easier problem; steps grow until they no longer matter.
+    for (let i = 0; i < nodes; i++) {
+      h[i] = Number.isNaN(net.held[i]!) ? Math.max(net.base[i]!, Math.min(guess[i]!, net.upper[i]!)) : net.held[i]!
+    }
+    let width = 0
+    for (let i = 0; i < nodes; i++) width += net.width[i]!
+    let rate = (1e3 * moved.diagonal) / (width / nodes)
+    let growth = 10
+    for (let k = 0; k < 150 && !converged; k++) {
       before.set(h)
-      const ok = run(12, rate)
-      if (ok) rate /= 6
-      else {
-        rate *= 20
+      if (run(15, rate)) {
+        const worst = balance(net, h, q, rest, state, workspace(nodes))
+        converged = worst <= 1e-9 * flowScale(net, q) + moved.floor
+        rate /= growth
+      } else {
+        rate *= growth * 2
+        growth = Math.max(1.5, growth / 1.7)
         h.set(before)
-      }
-      if (ok && rate < 1e-9) {
-        before.set(h)
-        converged = run(60, 0)
-        if (!converged) h.set(before)
-        if (rate < 1e-16) break
       }
     }
   }
@@ -190,9 +196,26 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
   return { h, q, state, rest, converged, iterations }
 }
 
-/** Largest step (m), worst balance, flow that matters and rounding of the flows (m²/d). */
-type Moved = { step: number; worst: number; scale: number; floor: number }
-const moved: Moved = { step: 0, worst: 0, scale: 0, floor: 0 }
+/**
+ * A rise taken in P = ∫ T dh rather than in h: over level ground flow is linear in P, so this step does not overshoot where T
+ * grows from almost nothing or jumps to a far better layer. The smaller of what the columns beside the node allow.
+ */
+function throughPotential(net: Net, i: number, h: number, delta: number): number {
+  let least = delta
+  for (let j = i - 1; j <= i; j++) {
+    if (j < 0 || j >= net.links || net.panel[j]! < 0) continue
+    const t = transmissivity(net.columns, j, h)
+    if (t <= 0) continue
+    const up = headOfPotential(net.columns, j, potential(net.columns, j, h) + t * delta) - h
+    if (up < least) least = up
+  }
+  const s = h - net.base[i]!
+  return Math.max(least, Math.min(delta, 0.01 * s))
+}
+
+/** Largest step (m), worst balance, flow that matters, rounding of the flows (m²/d), largest of the matrix (m/d). */
+type Moved = { step: number; worst: number; scale: number; floor: number; diagonal: number }
+const moved: Moved = { step: 0, worst: 0, scale: 0, floor: 0, diagonal: 0 }
 
 function iterate(
   net: Net,
@@ -231,7 +254,10 @@ function iterate(
   let diagonal = 0
   for (let i = 0; i < nodes; i++) if (w.diagonal[i]! > diagonal) diagonal = w.diagonal[i]!
   const floor = diagonal * 1e-14 + 1e-300
-  moved.floor = diagonal * reach * 1e-15
+  let height = reach
+  for (let i = 0; i < nodes; i++) if (h[i]! - net.base[i]! > height) height = h[i]! - net.base[i]!
+  moved.floor = diagonal * height * 2e-15
+  moved.diagonal = diagonal
   for (let i = 0; i < nodes; i++) {
     if (state[i] === STATE.free) {
       w.right[i] = -rest[i]!
@@ -247,14 +273,17 @@ function iterate(
   }
   solveTridiagonal(nodes, w.lower, w.diagonal, w.upper, w.right)
   let step = 0
+  const dry = DRY * reach
   for (let i = 0; i < nodes; i++) {
     if (state[i] !== STATE.free) continue
     const old = h[i]!
     const s = old - net.base[i]!
     let delta = w.right[i]!
-    if (!(delta < reach)) delta = reach
+    const most = 3 * s + 1e-3 * reach
+    if (!(delta < most)) delta = most
+    if (delta > 0.02 * s) delta = throughPotential(net, i, old, delta)
     if (delta < 0) {
-      const least = s < DRY ? -s : -0.95 * s
+      const least = s < dry ? -s : -0.95 * s
       if (delta < least) delta = least
     }
     let next = old + delta
