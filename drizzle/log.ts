@@ -85,12 +85,12 @@ export async function lastSeqs(
     .select({
       sectionId: section.id,
       epoch: section.epoch,
-      row: sql<
-        number | null
-      >`(select ${sectionUpdate.seq} from ${sectionUpdate} where ${sectionUpdate.sectionId} = ${section.id}
-        and ${sectionUpdate.epoch} = ${section.epoch} order by ${sectionUpdate.seq} desc limit 1)`,
-      folded: sql<number | null>`(select ${sectionSnapshot.seq} from ${sectionSnapshot}
-        where ${sectionSnapshot.sectionId} = ${section.id} and ${sectionSnapshot.epoch} = ${section.epoch})`,
+      // Spelt out: in a select from one table Drizzle leaves the table names away, and `epoch = epoch` would then compare the
+      // inner column with itself.
+      row: sql<number | null>`(select u.seq from section_update u
+        where u.section_id = section.id and u.epoch = section.epoch order by u.seq desc limit 1)`,
+      folded: sql<number | null>`(select s.seq from section_snapshot s
+        where s.section_id = section.id and s.epoch = section.epoch)`,
     })
     .from(section)
     .where(inArray(section.id, sectionIds))

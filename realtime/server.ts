@@ -76,10 +76,7 @@ export function create(deps: Deps): Sidecar {
   })
 
   const recheck = new Recheck({
-    askAll: async (asks) => {
-      const [answers] = await Promise.all([askAll(asks), rooms.compare()])
-      return answers
-    },
+    askAll,
     every: limits.recheck,
     unknownFor: limits.unknownFor,
     log,
@@ -95,6 +92,7 @@ export function create(deps: Deps): Sidecar {
           }
         },
       })),
+    also: () => rooms.compare(),
     onUnknown: () => {
       for (const connection of connections.values()) connection.close(CLOSE.drain)
     },

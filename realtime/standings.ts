@@ -21,7 +21,16 @@ export function together(askAll: AskAll): (ask: Ask) => Promise<Answer | undefin
 }
 
 type Asked = { ask: Ask; hear(answer: Answer | undefined): void }
-type Options = { askAll: AskAll; open(): Asked[]; every: number; unknownFor: number; onUnknown(): void; log: Log }
+type Options = {
+  askAll: AskAll
+  /** Done on the same beat, after standings have been heard. */
+  also(): Promise<void>
+  open(): Asked[]
+  every: number
+  unknownFor: number
+  onUnknown(): void
+  log: Log
+}
 
 /**
  * Asks the facts of every open connection again and again, in one batch, and at once when poked. So a revoked link or a removed
@@ -61,12 +70,13 @@ export class Recheck {
         const answers = await this.options.askAll(open.map((o) => o.ask))
         this.answered = Date.now()
         for (const { ask, hear } of open) hear(answers.get(ask.key))
+        await this.options.also()
       } while (this.again)
     } catch (error) {
       this.again = false
       this.options.log.warn(
         { why: error instanceof Error ? error.message : String(error) },
-        'standings cannot be asked',
+        'standings or the log cannot be read now',
       )
       if (Date.now() - this.answered > this.options.unknownFor) this.options.onUnknown()
     } finally {

@@ -129,16 +129,14 @@ export async function makePractice(db: Db['db']) {
     async link(sectionId: string, expiresAt: Date | null = null) {
       const token = randomBytes(24).toString('base64url')
       const id = randomUUID()
-      await db
-        .insert(link)
-        .values({
-          id,
-          sectionId,
-          tokenHash: hashToken(token),
-          label: 'For the client',
-          createdBy: principal.userId,
-          expiresAt,
-        })
+      await db.insert(link).values({
+        id,
+        sectionId,
+        tokenHash: hashToken(token),
+        label: 'For the client',
+        createdBy: principal.userId,
+        expiresAt,
+      })
       return { id, token }
     },
   }
