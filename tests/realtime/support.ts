@@ -216,6 +216,7 @@ export async function sidecarProcess(databaseUrl: string, given: { port?: number
 
 // ——— pages ———
 
+export type Ticketed = Ticket
 type Entry = { person: Person } | { token: string }
 
 /** A ticket as the app's route makes it. */
