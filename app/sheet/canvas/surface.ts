@@ -1,6 +1,6 @@
-import { customAlphabet } from 'nanoid'
 import { show as showQuantity } from '../panels/fields/quantities'
 import type { OpenSheet } from '../sheet-store'
+import { freshId } from '../tools/fresh-id'
 import { handleAt } from '../tools/handles'
 import { insideBox } from '../tools/inside'
 import { neat } from '../tools/moves'
@@ -9,7 +9,6 @@ import { pickAt, snapTo } from './picking'
 import type { Picture } from './picture'
 
 const FOOT = 0.3048
-const letters = customAlphabet('0123456789abcdefghjkmnpqrstuvwxyz', 7)
 
 /** What the surface needs of the mounted canvas. */
 export type Ground = {
@@ -85,7 +84,7 @@ export function createSurface(ground: Ground): Surface {
       return ground.askText(x, y, initial)
     },
     pan: ground.pan,
-    id: (prefix) => `${prefix}${letters()}`,
+    id: freshId,
     order() {
       counter += 1
       return `${Date.now().toString(36).padStart(9, '0')}${counter.toString(36).padStart(4, '0')}`
