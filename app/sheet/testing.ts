@@ -108,7 +108,7 @@ export function openTogether(names: string[], options: Partial<SheetOptions> = {
     const presence: Presence = { who: { id: name, name, ink: i, kind: 'person' } }
     const state: LinkState = { kind: 'stored' }
     const connection: Connection = {
-      get state() {
+      get state(): LinkState {
         return off.has(i) ? { kind: 'offline', waiting: 0 } : state
       },
       may: options.may ?? 'write',

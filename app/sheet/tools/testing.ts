@@ -98,7 +98,7 @@ export function takeTool(
       machine.doubleUp(at(x, z, how))
       sheet.settle()
     },
-    key: (key: string) => machine.key({ key, shift: false, alt: false, ctrl: false }),
+    key: (key: string) => machine.key({ key, shift: false, alt: false }),
     cancel: () => {
       machine.cancel()
       sheet.settle()

@@ -18,7 +18,7 @@ export type At = Spot & {
   /** 0…1; 0.5 where the device knows none. */
   pressure: number
 }
-export type Press = { key: string; shift: boolean; alt: boolean; ctrl: boolean }
+export type Press = { key: string; shift: boolean; alt: boolean }
 
 /** Where a vertex can be dragged or a new one pulled out of an edge, or an end or a level of something. */
 export type Handle = Spot & {
