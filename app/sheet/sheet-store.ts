@@ -250,10 +250,12 @@ export function createSheet(options: SheetOptions): OpenSheet {
       return stored
     },
     say,
-    edit(edits, join) {
+    edit(edits, join, pick) {
       if (edits.length === 0) return true
       if (!mayWrite()) return false
-      write(toCase(edits, get().caseId), get().picked, join)
+      const before = get().picked
+      if (pick) sheet.set({ picked: pick })
+      write(toCase(edits, get().caseId), before, join)
       return true
     },
     gesture,

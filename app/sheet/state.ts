@@ -120,8 +120,9 @@ export type Sheet = {
   /** Say something in the status line. */
   say(text: string, tone?: 'plain' | 'trouble'): void
   /** One undoable step; refused (returns false) without write access. In a case, edits of plain values go to that case
-   * (case-edits.ts). Edits with the same `join` word within a second become one step (nudging). */
-  edit(edits: Edit[], join?: string): boolean
+   * (case-edits.ts). Edits with the same `join` word within a second become one step (nudging). `pick`: what is
+   * picked once it is done (undo goes back to what was picked before). */
+  edit(edits: Edit[], join?: string, pick?: string[]): boolean
   /**
    * Start / replace / finish / drop the gesture in progress. `finish` writes one transaction. Given a function, `show` asks it
    * again whenever the stored document changes under the gesture: the start is then re-anchored and the total shift kept.

@@ -50,7 +50,5 @@ function put(sheet: OpenSheet, cut: Cut) {
   const beyond = from + aside > right.x || to + aside < left.x
   const shift = neat(beyond ? middle - (from + to) / 2 : Number(aside.toPrecision(1)))
   const { edits, picked } = pasteEdits(cut, section, shift, freshId)
-  const before = state.picked
-  sheet.set({ picked, tool: 'pick' })
-  if (!sheet.edit(edits)) sheet.set({ picked: before })
+  if (sheet.edit(edits, undefined, picked)) sheet.set({ tool: 'pick' })
 }

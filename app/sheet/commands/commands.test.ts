@@ -85,6 +85,7 @@ describe('commands', () => {
     one.sheet.undo()
     expect(one.section().bodies).toHaveLength(1)
     expect(one.section().features).toHaveLength(1)
+    expect(one.sheet.get().picked).toEqual(['bodies.b1', 'features.d1', 'left'])
 
     const other = setUp()
     other.sheet.edit([

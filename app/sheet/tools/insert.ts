@@ -1,3 +1,4 @@
+import type { Edit } from '~/live'
 import { isLine, lineOf, vertexOf, vertexPath } from './paths'
 import type { At, Surface } from './types'
 
@@ -28,7 +29,13 @@ export function insertOn(surface: Surface, path: string, at: At): boolean {
   const [a, b] = [points[best.after], points[best.after + 1]]
   if (!closed && a && b && (spot.x <= a[0] || spot.x >= b[0])) return false
   const key = surface.id('v')
-  sheet.edit([{ do: 'insert-vertex', line, key, at: [spot.x, spot.z], after: keys[best.after] ?? null }])
-  sheet.set({ picked: [vertexPath(line, key)] })
+  const insert = {
+    do: 'insert-vertex',
+    line,
+    key,
+    at: [spot.x, spot.z],
+    after: keys[best.after] ?? null,
+  } satisfies Edit
+  sheet.edit([insert], undefined, [vertexPath(line, key)])
   return true
 }

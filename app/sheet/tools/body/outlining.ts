@@ -52,7 +52,7 @@ export function outlining(surface: Surface, first: Spot, back: () => State): Sta
       list: 'bodies',
       object: { id, material, outline: corners.map(({ x, z }) => [neat(x), neat(z)]) },
     })
-    sheet.edit(edits)
+    sheet.edit(edits, undefined, [`bodies.${id}`])
     drawn(surface, [`bodies.${id}`], false)
     return back()
   }
