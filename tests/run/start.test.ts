@@ -9,11 +9,11 @@ import { newPlace, type Place, stackPids, startStack, until } from '../setup/sta
 // npm start as a person meets it: the real program, its own database, the production build (made here if it is not there yet).
 const BUILDING = 240_000
 
-const signUp = (place: Place, email: string) =>
+const signUp = (place: Place, email: string, origin = place.url) =>
   fetch(`${place.url}/sign-up`, {
     method: 'POST',
     redirect: 'manual',
-    headers: { origin: place.url },
+    headers: { origin },
     body: new URLSearchParams({ name: 'Ada Reed', email, password: 'seven herons standing', practice: 'Reed & Sedge' }),
   })
 const signIn = (place: Place, email: string) =>
@@ -117,6 +117,27 @@ describe('npm start', () => {
   )
 })
 
+describe('npm start with DATABASE_URL', () => {
+  it(
+    'uses that server and starts none of its own',
+    async () => {
+      const [elsewhere, database] = [await newPlace(), await ownDatabase()]
+      const attempt = startStack(elsewhere, { DATABASE_URL: database.url })
+      try {
+        await attempt.up()
+        expect((await signUp(elsewhere, 'ada@reed.example')).status).toBe(302)
+        expect(stackPids(elsewhere, attempt.pid).database).toBeNull()
+        expect(existsSync(path.join(elsewhere.folder, 'db'))).toBe(false)
+      } finally {
+        await attempt.stop()
+        elsewhere.remove()
+        await database.drop()
+      }
+    },
+    BUILDING,
+  )
+})
+
 describe('npm start for real people', () => {
   it(
     'runs on secrets of one’s own, without the demo, without a mailbox and behind https',
@@ -135,7 +156,9 @@ describe('npm start for real people', () => {
         const page = await fetch(`${real.url}/sign-in`)
         expect(page.headers.get('strict-transport-security')).toContain('max-age')
         expect(page.headers.get('content-security-policy')).toContain("frame-ancestors 'none'")
-        const signed = await signUp(real, 'ada@reed.example')
+        // The proxy in front ends TLS: the form's origin is the public address, the request itself is plain.
+        const signed = await signUp(real, 'ada@reed.example', 'https://doab.office.example')
+        expect((await signUp(real, 'eve@reed.example', 'https://evil.example')).status).toBe(400)
         expect(signed.headers.get('set-cookie')).toMatch(/^__Secure-.*; Secure/i)
       } finally {
         await attempt.stop()

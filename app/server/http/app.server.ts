@@ -109,7 +109,9 @@ export function createApp(build: ServerBuild, clientFolder: string) {
   )
   app.use(express.static(clientFolder, { maxAge: '1h', index: false, redirect: false, setHeaders: noSniff }))
   app.use(identify, limitBody)
-  const handle = createRequestHandler({ build, mode: env.NODE_ENV })
+  // Behind a proxy that ends TLS the request looks like http:// here, while forms come from https://: APP_URL says who we are.
+  const ours = { ...build, allowedActionOrigins: [new URL(env.APP_URL).host] }
+  const handle = createRequestHandler({ build: ours, mode: env.NODE_ENV })
   app.use((req, res, next) => void handle(req, res, next))
   app.use(onError)
   return app
