@@ -5,7 +5,7 @@ import type { Ground } from '../ground/ground'
 import { firstHeads, reachOf } from './guess'
 import { endTransmissivity, headInLink, type Inner, makeInner, REACH } from './inner'
 import { cut, firstCells } from './mesh'
-import { buildNet } from './net'
+import { buildNet, sinkFlow } from './net'
 import { STATE, solveNet } from './newton'
 
 export type General = {
@@ -86,13 +86,15 @@ function partsFor(inner: Inner, errors: Float64Array, total: number, goal: numbe
   for (let j = 0; j < net.links; j++) {
     const m = total > goal / 3 ? Math.min(8, Math.max(1, Math.ceil(Math.sqrt(errors[j]! / each)))) : 1
     size[j] = net.length[j]! / m
-    if (net.panel[j]! < 0 || !edgeOfReach(inner, j)) continue
+    if (net.panel[j]! < 0) continue
+    if (doubt(inner, j) > goal / 4 && net.length[j]! > whole * 1e-7) size[j] = net.length[j]! / 8
+    if (!edgeOfReach(inner, j)) continue
     if (net.length[j]! > whole * 1e-7 && Math.abs(inner.h[j]! - inner.h[j + 1]!) > goal / 2)
       size[j] = net.length[j]! / 8
   }
   // A reach may end a little beyond where the coarse mesh put it: cells grow no faster than 3-fold away from its end.
   for (let j = 0; j < net.links; j++) {
-    if (net.panel[j]! < 0 || !edgeOfReach(inner, j)) continue
+    if (net.panel[j]! < 0 || !(edgeOfReach(inner, j) || doubt(inner, j) > goal / 4)) continue
     for (const way of [-1, 1]) {
       let most = size[j]!
       for (let i = j + way; i >= 0 && i < net.links && net.length[i]! > most; i += way) {
@@ -114,6 +116,33 @@ function edgeOfReach(inner: Inner, j: number): boolean {
   const b = inner.state[j + 1]!
   if (a === b) return false
   return a === STATE.upper || b === STATE.upper || a === STATE.dry || b === STATE.dry
+}
+
+/**
+ * Head that may hide in a link although its nodes are wet or dry, m: on a coarse mesh a node's half cells can outweigh what
+ * happens at the node itself (a trench or a wall in wet ground, a spring in dry ground, a reach where T falls). There a wet
+ * node would have to take water in, or a dry link has water coming onto it.
+ */
+function doubt(inner: Inner, j: number): number {
+  const { net, h, before, after, state, reach } = inner
+  const length = net.length[j]!
+  if (reach[j] === REACH.wet) {
+    let lacks = Math.max(0, before[j + 1]! - after[j]! - net.w[j]! * length)
+    for (const i of [j, j + 1]) {
+      const whole = i > 0 && i < net.nodes - 1 && state[i] === STATE.upper
+      const both = reach[j + (i === j ? -1 : 1)]
+      if (whole && (both === REACH.wet || both === REACH.wall))
+        lacks = Math.max(lacks, after[i]! + sinkFlow(net, i, h[i]!) - before[i]!)
+    }
+    if (lacks <= 0) return 0
+    return (lacks * length) / Math.max(1e-300, transmissivity(net.columns, j, (h[j]! + h[j + 1]!) / 2))
+  }
+  if (reach[j] === REACH.dry) {
+    let gains = Math.max(0, net.w[j]!) * length
+    for (const i of [j, j + 1]) if (state[i] === STATE.dry) gains = Math.max(gains, -sinkFlow(net, i, h[i]!))
+    return gains > 0 ? Math.sqrt((2 * gains * length) / net.columns.k[net.columns.start[j]!]!) : 0
+  }
+  return 0
 }
 
 /** The general path: finite volumes, refined where the link error is large, then halved to estimate the error. */
