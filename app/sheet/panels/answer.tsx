@@ -53,9 +53,7 @@ function SolvedAnswer({ solution }: { solution: Solved }) {
             {show(Math.abs(straight.worst), 'length', units)} at {show(straight.at, 'distance', units)}
           </Place>
         </Line>
-        <Line label="Own error">
-          {error.head === 0 ? 'round-off only' : `± ${show(error.head, 'small-length', units)}`}
-        </Line>
+        <Line label="Own error">{ownError(error.head, units)}</Line>
       </dl>
       <p className="quiet method">
         {capital(method.reason)}
@@ -72,6 +70,12 @@ function Place({ x, children }: { x: number; children: ReactNode }) {
       {children}
     </button>
   )
+}
+
+/** Below a tenth of a millimetre a figure would only pretend to mean something. */
+function ownError(head: number, units: UnitSet): string {
+  if (head === 0) return 'round-off only'
+  return head < 1e-4 ? `under ${show(1e-4, 'small-length', units)}` : `± ${show(head, 'small-length', units)}`
 }
 
 const divideWord = ({ kind }: Divide) => (kind === 'divide' ? 'Divide' : 'Trough')
