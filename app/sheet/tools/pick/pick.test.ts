@@ -141,6 +141,13 @@ describe('pick', () => {
     expect(sheet.get().picked).toEqual(['bodies.b1'])
   })
 
+  it('moves the sheet under a finger on bare paper', () => {
+    const { pointer, sheet, shown } = takeTool({ things: () => null })
+    pointer.drag([55, 10], [85, 2.5], { kind: 'touch' })
+    expect(shown.pans).not.toHaveLength(0)
+    expect(sheet.get().picked).toEqual([])
+  })
+
   it('moves nothing for a reader but lets them pick', () => {
     const { pointer, sheet, section, sent } = takeTool({ things, sheet: { may: 'read' } })
     pointer.drag([40, 9.5], [60, 8])

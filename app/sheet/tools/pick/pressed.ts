@@ -1,3 +1,4 @@
+import { panning } from '../hand/panning'
 import { far } from '../start'
 import type { At, Hit, State, Surface } from '../types'
 import { dragging } from './dragging'
@@ -21,7 +22,8 @@ export function pressed(surface: Surface, from: At, hit: Hit | null, back: () =>
     busy: true,
     move(at) {
       if (!far(from, at)) return undefined
-      if (!hit) return marquee(surface, from, at, back)
+      // A finger on bare paper moves the sheet, as anywhere else on a phone; a marquee is for finer pointers.
+      if (!hit) return from.kind === 'touch' ? panning(surface, from, back) : marquee(surface, from, at, back)
       if (sheet.get().may !== 'write') {
         sheet.say('You are reading this section; nothing can be moved from here.', 'trouble')
         return back()
