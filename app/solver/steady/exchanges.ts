@@ -152,6 +152,13 @@ export function exchangeWarnings(inner: Inner, exchanges: Exchange[]): Problem[]
       place: { x: net.x[first.node]!, to: net.x[last.node]! },
     })
   }
+  for (const pool of inner.pools) {
+    warnings.push({
+      path: 'base',
+      message: 'This hollow is cut off and nothing feeds, drains or holds it: any level would do. It is shown dry.',
+      place: { x: net.x[pool.first]!, to: net.x[pool.last]! },
+    })
+  }
   if (reach.every((r) => r === REACH.dry || r === REACH.wall))
     warnings.push({
       path: 'base',

@@ -11,6 +11,8 @@ import { STATE, solveNet } from './newton'
 export type General = {
   inner: Inner
   error: { head: number; flow: number; nodes: number; refinements: number }
+  /** The head goal, m. */
+  goal: number
   converged: boolean
 }
 
@@ -31,7 +33,8 @@ function goalOf(h: Float64Array): number {
 /**
  * How far the head over link j is off because T changes along x within it, m. The cell's own scheme takes the column at mid
  * length; where T at the ends, at the same heads, differs from it by the factor r, the missing head is ∫ q (1 − 1/r) dx / T.
- * 0 for one material over a level base, where the scheme is exact. In thin water the whole change of thickness counts.
+ * 0 for one material over a level base, where the scheme is exact. In thin water the whole change of thickness counts, with a
+ * minus sign: such errors fade along the slope, so they do not add up.
  */
 export function linkError(inner: Inner, j: number, goal: number): number {
   const { net, ground, h } = inner
@@ -43,7 +46,7 @@ export function linkError(inner: Inner, j: number, goal: number): number {
   const sr = hr - net.base[j + 1]!
   if (Math.max(sl, sr) < goal) return 0
   if (drop !== 0 && Math.min(drop > 0 ? sl : sr, drop > 0 ? sr : sl) < Math.abs(drop) / 2) {
-    return Math.min(Math.abs(sl - sr) / 2, Math.abs(hl - hr))
+    return -Math.min(Math.abs(sl - sr) / 2, Math.abs(hl - hr))
   }
   const own = net.columns
   if (drop === 0 && own.start[j + 1]! - own.start[j]! === 1) return 0
@@ -58,6 +61,9 @@ export function linkError(inner: Inner, j: number, goal: number): number {
   // Opposite ends nearly cancel when T runs straight; what is left of the curvature is the error, their difference a warning.
   return Math.abs((lost * net.length[j]!) / (6 * mid))
 }
+
+/** A quarter, a sixteenth … of the cells asked for, so that quartering comes out at them. */
+const startOf = (nodes: number): number => (nodes > 250 ? startOf(nodes / 4) : Math.max(1, Math.round(nodes)))
 
 /** Heads of a finer mesh from those of a coarser one: the coarse interpolation at the new nodes. */
 function carry(inner: Inner, parts: Int32Array, nodes: number): Float64Array {
@@ -84,8 +90,9 @@ function partsFor(inner: Inner, errors: Float64Array, total: number, goal: numbe
   const whole = net.x[net.nodes - 1]! - net.x[0]!
   const size = new Float64Array(net.links)
   for (let j = 0; j < net.links; j++) {
-    const m = total > goal / 3 ? Math.min(8, Math.max(1, Math.ceil(Math.sqrt(errors[j]! / each)))) : 1
-    size[j] = net.length[j]! / m
+    const e = errors[j]!
+    const m = e < 0 ? (-2 * e) / goal : total > goal / 3 ? Math.sqrt(e / each) : 1
+    size[j] = net.length[j]! / Math.min(8, Math.max(1, Math.ceil(m)))
     if (net.panel[j]! < 0) continue
     if (doubt(inner, j) > goal / 4 && net.length[j]! > whole * 1e-7) size[j] = net.length[j]! / 8
     if (!edgeOfReach(inner, j)) continue
@@ -149,7 +156,7 @@ function doubt(inner: Inner, j: number): number {
 export function solveGeneral(section: Section, ground: Ground, options: { nodes?: number } = {}): General {
   const reach = reachOf(section)
   const fixed = options.nodes !== undefined
-  let cells = firstCells(ground, fixed ? Math.min(options.nodes ?? FIRST, 250) : FIRST, fixed ? 1 : 2, fixed)
+  let cells = firstCells(ground, fixed ? startOf(options.nodes ?? FIRST) : FIRST, fixed ? 1 : 2, fixed)
   let net = buildNet(section, ground, cells)
   let answer = solveNet(net, firstHeads(net, reach), reach)
   let inner = makeInner(section, ground, net, answer, false)
@@ -163,23 +170,23 @@ export function solveGeneral(section: Section, ground: Ground, options: { nodes?
   }
   if (fixed) {
     const wanted = options.nodes ?? FIRST
-    while (cells.panel.length * 2 <= wanted) {
-      to(new Int32Array(cells.panel.length).fill(Math.min(4, Math.floor(wanted / cells.panel.length))))
-    }
+    while (cells.panel.length * 3 <= wanted) to(new Int32Array(cells.panel.length).fill(4))
     return {
       inner,
+      goal: Number.POSITIVE_INFINITY,
       converged: answer.converged,
       error: { head: Number.NaN, flow: Number.NaN, nodes: net.nodes, refinements },
     }
   }
   let goal = goalOf(inner.h)
   let error = { head: Number.NaN, flow: Number.NaN }
+  const room = Math.max(MOST, 10 * cells.panel.length)
   for (let level = 0; level < 8; level++) {
     const errors = new Float64Array(net.links)
     let total = 0
     for (let j = 0; j < net.links; j++) {
       errors[j] = linkError(inner, j, goal)
-      total += errors[j]!
+      total += Math.max(0, errors[j]!)
     }
     const parts = partsFor(inner, errors, total, goal)
     const last = parts.every((m) => m === 1)
@@ -188,14 +195,14 @@ export function solveGeneral(section: Section, ground: Ground, options: { nodes?
       if (last) parts[c] = 2
       size += parts[c]!
     }
-    if (size > MOST) break
+    if (size > room) break
     const coarse = inner
     to(parts)
     goal = goalOf(inner.h)
     error = differences(coarse, inner, parts)
     if (last && error.head <= goal) break
   }
-  return { inner, converged: answer.converged, error: { ...error, nodes: net.nodes, refinements } }
+  return { inner, goal, converged: answer.converged, error: { ...error, nodes: net.nodes, refinements } }
 }
 
 /** Between two meshes, at the nodes both have: a third of the head's and flow's largest change (second order), m and m²/d. */

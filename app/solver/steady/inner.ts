@@ -26,6 +26,8 @@ export type Inner = {
   state: Uint8Array
   rest: Float64Array
   reach: Uint8Array
+  /** Pools that nothing holds, shown empty: first and last node. */
+  pools: { first: number; last: number }[]
 }
 
 /** T(h) at `share` of a panel's width without making a column, m²/d. */
@@ -109,7 +111,7 @@ export function makeInner(section: Section, ground: Ground, net: Net, answer: Ne
   }
   before[0] = after[0]!
   after[nodes - 1] = before[nodes - 1]!
-  return { exact, section, ground, net, h, before, after, state, rest: answer.rest, reach }
+  return { exact, section, ground, net, h, before, after, state, rest: answer.rest, reach, pools: answer.pools }
 }
 
 /** The link that holds x, never a wall; at a node the link to the right, or to the left with `side` 'left'. */

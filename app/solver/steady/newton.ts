@@ -2,6 +2,7 @@
 import { headOfPotential, potential, transmissivity } from '../ground/columns'
 import { solveTridiagonal } from '../linear/tridiagonal'
 import { type Net, sinkFlow, sinkSlope } from './net'
+import { emptyStillPools } from './pools'
 
 /**
  * Flow through a link, m²/d, positive to the right, with its slopes in the two heads.
@@ -80,6 +81,8 @@ export type NetAnswer = {
   rest: Float64Array
   converged: boolean
   iterations: number
+  /** Pools that nothing holds, emptied: first and last node. */
+  pools: { first: number; last: number }[]
 }
 
 type Work = { n: number; lower: Float64Array; diagonal: Float64Array; upper: Float64Array; right: Float64Array }
@@ -170,6 +173,8 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
     return false
   }
   let converged = run(40, 0)
+  // Newton doubles the digits: one step more costs little and leaves rounding only.
+  if (converged && moved.step > 0) iterate(net, h, q, rest, state, reach, 0, before)
   if (!converged) {
     // Walk there in time from the guess: each step is an easier problem; steps grow until they no longer matter.
     for (let i = 0; i < nodes; i++) {
@@ -185,6 +190,10 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
         const worst = balance(net, h, q, rest, state, workspace(nodes))
         converged = worst <= 1e-9 * flowScale(net, q) + moved.floor
         rate /= growth
+        if (converged) {
+          before.set(h)
+          if (!run(40, 0)) h.set(before)
+        }
       } else {
         rate *= growth * 2
         growth = Math.max(1.5, growth / 1.7)
@@ -193,24 +202,32 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
     }
   }
   balance(net, h, q, rest, state, workspace(nodes))
-  return { h, q, state, rest, converged, iterations }
+  const answer: NetAnswer = { h, q, state, rest, converged, iterations, pools: [] }
+  if (converged) answer.pools = emptyStillPools(net, answer, 1e-9 * flowScale(net, q) + 100 * moved.floor)
+  return answer
 }
 
+/** Whether the base is level on both sides of a node. */
+const isLevelAt = (net: Net, i: number): boolean =>
+  (i === 0 || net.drop[i - 1] === 0) && (i === net.links || net.drop[i] === 0)
+
 /**
- * A rise taken in P = ∫ T dh rather than in h: over level ground flow is linear in P, so this step does not overshoot where T
- * grows from almost nothing or jumps to a far better layer. The smaller of what the columns beside the node allow.
+ * A step taken in P = ∫ T dh rather than in h: over level ground flow is linear in P, so a rise does not overshoot where T
+ * grows from almost nothing or jumps to a far better layer, and a fall over a level base arrives at once. Of the columns
+ * beside the node the one that gives the smaller step.
  */
 function throughPotential(net: Net, i: number, h: number, delta: number): number {
-  let least = delta
+  let best = delta > 0 ? delta : Number.NEGATIVE_INFINITY
   for (let j = i - 1; j <= i; j++) {
     if (j < 0 || j >= net.links || net.panel[j]! < 0) continue
     const t = transmissivity(net.columns, j, h)
     if (t <= 0) continue
-    const up = headOfPotential(net.columns, j, potential(net.columns, j, h) + t * delta) - h
-    if (up < least) least = up
+    const step = headOfPotential(net.columns, j, potential(net.columns, j, h) + t * delta) - h
+    if (delta > 0 ? step < best : step > best) best = step
   }
+  if (delta <= 0) return best === Number.NEGATIVE_INFINITY ? delta : best
   const s = h - net.base[i]!
-  return Math.max(least, Math.min(delta, 0.01 * s))
+  return Math.max(best, Math.min(delta, 0.01 * s))
 }
 
 /** Largest step (m), worst balance, flow that matters, rounding of the flows (m²/d), largest of the matrix (m/d). */
@@ -283,6 +300,7 @@ function iterate(
     if (!(delta < most)) delta = most
     if (delta > 0.02 * s) delta = throughPotential(net, i, old, delta)
     if (delta < 0) {
+      if (delta < -0.02 * s && isLevelAt(net, i)) delta = throughPotential(net, i, old, delta)
       const least = s < dry ? -s : -0.95 * s
       if (delta < least) delta = least
     }

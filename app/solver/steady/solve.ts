@@ -63,7 +63,19 @@ export function solveSteady(section: Section, options: SolveOptions = {}): Solut
     )
   }
   const cause = why ?? (forced ? 'general path asked for' : 'sloping or broken base, or sloping contacts')
-  return report(caseId, general.inner, { kind: 'general', reason: `solved by finite volumes: ${cause}` }, general.error)
+  const answer = report(
+    caseId,
+    general.inner,
+    { kind: 'general', reason: `solved by finite volumes: ${cause}` },
+    general.error,
+  )
+  if (general.error.head > Math.max(1e-3, 3 * general.goal))
+    answer.warnings.push({
+      path: 'base',
+      message: `The heads may be off by about ${figure(general.error.head)} m, more than this sheet aims for.`,
+      place: { x: shown.left.x, to: shown.right.x },
+    })
+  return answer
 }
 
 function unsolved(caseId: string | null, reason: Problem[], mend: string): Unsolved {
