@@ -102,7 +102,12 @@ function solved(section: Section, options: SolveOptions = {}) {
 const rows: Row[] = []
 const exact = solved(level)
 const general = solved(sloping)
-rows.push({ what: 'demo section, exact path', median: median(() => solveSteady(level)), goal: 0.5, note: exact.method.reason })
+rows.push({
+  what: 'demo section, exact path',
+  median: median(() => solveSteady(level)),
+  goal: 0.5,
+  note: exact.method.reason,
+})
 rows.push({
   what: 'demo section, general path',
   median: median(() => solveSteady(sloping)),
@@ -137,13 +142,20 @@ const times = random.map((section) => {
   return performance.now() - start
 })
 times.sort((a, b) => a - b)
-rows.push({ what: '500 random sections, median', median: times[250] ?? 0, goal: null, note: `95 %: ${(times[475] ?? 0).toFixed(2)} ms` })
+rows.push({
+  what: '500 random sections, median',
+  median: times[250] ?? 0,
+  goal: null,
+  note: `95 %: ${(times[475] ?? 0).toFixed(2)} ms`,
+})
 
 const wide = Math.max(...rows.map(({ what }) => what.length))
 console.log(`${'median of one call'.padEnd(wide)}      ms    goal`)
 for (const { what, median: ms, goal, note } of rows) {
   const verdict = goal === null ? '' : ms <= goal ? 'met' : 'NOT MET'
-  console.log(`${what.padEnd(wide)}  ${ms.toFixed(3).padStart(6)}  ${(goal ?? '').toString().padStart(6)}  ${verdict.padEnd(8)} ${note}`)
+  console.log(
+    `${what.padEnd(wide)}  ${ms.toFixed(3).padStart(6)}  ${(goal ?? '').toString().padStart(6)}  ${verdict.padEnd(8)} ${note}`,
+  )
 }
 
 if (process.argv.includes('--memory')) {
