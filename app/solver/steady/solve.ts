@@ -6,6 +6,7 @@ import { exactReason, solveExact } from './exact'
 import { exchangesOf, exchangeWarnings, type Short } from './exchanges'
 import { type General, solveGeneral } from './general'
 import type { Inner } from './inner'
+import { fromOrigin, originOf, toDatum } from './origin'
 import { floodedReaches, highestOf, limitsOf, misfitsOf, profileOf, straightOf, turningPoints } from './profile'
 import { dividesOf, dryReaches, wetReaches } from './reaches'
 import { checkSense, labelOf } from './sense'
@@ -36,19 +37,22 @@ export function solveSteady(section: Section, options: SolveOptions = {}): Solut
   if (wrong.length > 0) return unsolved(caseId, wrong, 'Mend what is named, then the section can be solved.')
   const standing = nothingHolds(shown, caseId)
   if (standing) return standing
-  const ground = prepareGround(shown)
+  const origin = originOf(shown)
+  const local = fromOrigin(shown, origin)
+  const ground = prepareGround(local)
   let why: string | null = null
   const forced = options.path === 'general' || options.nodes !== undefined
-  const reason = forced ? null : exactReason(shown, ground)
+  const reason = forced ? null : exactReason(local, ground)
   if (reason !== null) {
-    const exact = solveExact(shown, ground)
+    const exact = solveExact(local, ground)
     if ('inner' in exact) {
+      toDatum(exact.inner, shown, origin)
       const error = { head: 0, flow: 0, nodes: exact.inner.net.nodes, refinements: 0 }
       return report(caseId, exact.inner, { kind: 'exact', reason }, error)
     }
     why = exact.why
   }
-  const general = solveGeneral(shown, ground, options.nodes === undefined ? {} : { nodes: options.nodes })
+  const general = solveGeneral(local, ground, options.nodes === undefined ? {} : { nodes: options.nodes })
   if (!general.converged) {
     return unsolved(
       caseId,
@@ -63,6 +67,7 @@ export function solveSteady(section: Section, options: SolveOptions = {}): Solut
     )
   }
   const cause = why ?? (forced ? 'general path asked for' : 'sloping or broken base, or sloping contacts')
+  toDatum(general.inner, shown, origin)
   const answer = report(
     caseId,
     general.inner,
