@@ -19,7 +19,9 @@ function candidates(count: number): { section: Section; family: string }[] {
     if (solution.status !== 'solved' || solution.dry.length > 0) continue
     const thinnest = Math.min(...solution.profile.saturated)
     const highest = Math.max(...solution.profile.saturated)
-    if (thinnest < 0.3 || highest > 60) continue
+    const heads = solution.profile.head
+    // Still water would only compare rounding.
+    if (thinnest < 0.3 || highest > 60 || Math.max(...heads) - Math.min(...heads) < 0.02) continue
     const family = [
       solution.method.kind,
       section.left.kind,

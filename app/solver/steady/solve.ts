@@ -1,7 +1,6 @@
-import type { Problem, Section } from '~/section'
+import { applyCase, type Problem, type Section } from '~/section'
 import { prepareGround } from '../ground/ground'
 import type { Method, Solution, Solved, Unsolved } from '../types'
-import { inCase } from './case'
 import { exactReason, solveExact } from './exact'
 import { exchangesOf, exchangeWarnings, type Short } from './exchanges'
 import { type General, solveGeneral } from './general'
@@ -32,7 +31,7 @@ export function solveSteady(section: Section, options: SolveOptions = {}): Solut
       'Choose one of its cases.',
     )
   }
-  const shown = inCase(section, caseId)
+  const shown = applyCase(section, caseId)
   const wrong = checkSense(shown)
   if (wrong.length > 0) return unsolved(caseId, wrong, 'Mend what is named, then the section can be solved.')
   const standing = nothingHolds(shown, caseId)
