@@ -1,4 +1,4 @@
-import type { Problem } from '~/section'
+import type { Bank, Feature, Problem } from '~/section'
 import type { Inner } from './steady/inner'
 
 /** How the answer was found, with the reason in words for the sheet ("solved exactly: flat base, vertical bands"). */
@@ -13,6 +13,10 @@ export type Exchange = {
   rate: number
   /** Aquifer head at the object, m; at a wall the head left and right. */
   head?: number | [left: number, right: number]
+  /** Where it stands, m: banks and features. */
+  x?: number
+  /** What it is: the bank's or feature's kind in the format's words. */
+  kind?: (Bank | Feature)['kind']
   /** For walls: flow across, m²/d, + to the right. */
   across?: number
   /** Perched, fed, dry, closed … where that matters. */
@@ -120,7 +124,8 @@ export type Reading = {
   right?: { head: number; flow: number }
 }
 
-export type TravelTime = { days: number | null; exit: 'left' | 'right' | string | null }
+/** `why` says in words why there is no time. */
+export type TravelTime = { days: number | null; exit: 'left' | 'right' | string | null; why?: string }
 
 /** One flow line as a path in metres with time since entering, days. `tube` = flow it carries, m²/d. */
 export type FlowLine = {

@@ -46,7 +46,14 @@ export function exchangesOf(
     const bank = section[side]
     const { rate, short: missing } = outAt(inner, node)
     if (missing > 0 && bank.kind === 'inflow') short.push({ of: side, asked: -bank.rate, comes: rate, x: bank.x })
-    const entry: Exchange = { of: side, label: labelOf(section, side), rate, head: h[node]! }
+    const entry: Exchange = {
+      of: side,
+      label: labelOf(section, side),
+      rate,
+      head: h[node]!,
+      x: bank.x,
+      kind: bank.kind,
+    }
     if (bank.kind === 'no-flow' || (bank.kind === 'water' && bank.conductance === 0)) entry.state = 'closed'
     else if (bank.kind === 'water' && bank.conductance !== null && h[node]! < net.sinkBed[node]!)
       entry.state = 'perched'
@@ -57,14 +64,15 @@ export function exchangesOf(
     const of = `features.${feature.id}`
     const node = net.featureNode[index]!
     const label = labelOf(section, of)
+    const { x, kind } = feature
     if (node < 0) return
     if (feature.kind === 'wall') {
-      exchanges.push({ of, label, rate: 0, head: [h[node]!, h[node + 1]!], across: after[node]! })
+      exchanges.push({ of, label, rate: 0, x, kind, head: [h[node]!, h[node + 1]!], across: after[node]! })
       return
     }
     const { rate, short: missing } = outAt(inner, node)
     if (missing > 0 && feature.kind === 'trench') short.push({ of, asked: feature.rate, comes: rate, x: feature.x })
-    const entry: Exchange = { of, label, rate, head: h[node]! }
+    const entry: Exchange = { of, label, rate, x, kind, head: h[node]! }
     if (h[node]! <= net.base[node]!) entry.state = 'dry'
     else if (feature.kind === 'drain' && rate <= 0) entry.state = 'idle'
     else if (feature.kind === 'ditch' && rate < 0) entry.state = 'feeding'

@@ -156,7 +156,12 @@ function doubt(inner: Inner, j: number): number {
 export function solveGeneral(section: Section, ground: Ground, options: { nodes?: number } = {}): General {
   const reach = reachOf(section)
   const fixed = options.nodes !== undefined
-  let cells = firstCells(ground, fixed ? startOf(options.nodes ?? FIRST) : FIRST, fixed || ground.x.length > 200 ? 1 : 2, fixed)
+  let cells = firstCells(
+    ground,
+    fixed ? startOf(options.nodes ?? FIRST) : FIRST,
+    fixed || ground.x.length > 200 ? 1 : 2,
+    fixed,
+  )
   let net = buildNet(section, ground, cells)
   let answer = solveNet(net, firstHeads(net, reach), reach)
   let inner = makeInner(section, ground, net, answer, false)
