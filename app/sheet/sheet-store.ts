@@ -116,7 +116,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
     if (docChanged) {
       docChanged = false
       stored = readLive(doc)
-      if (own?.make) own.edits = toCase(own.make(stored), get().caseId)
+      if (own?.make) own.edits = toCase(own.make(stored), get().caseId, stored.section)
     }
     const edits = own ? [...foreignEdits(), ...own.edits] : foreignEdits()
     const live = edits.length > 0 ? applyEdits(stored, edits) : stored
@@ -204,7 +204,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
     show(edits) {
       if (!own || get().may !== 'write') return
       own.make = typeof edits === 'function' ? edits : null
-      own.edits = toCase(typeof edits === 'function' ? edits(stored) : edits, get().caseId)
+      own.edits = toCase(typeof edits === 'function' ? edits(stored) : edits, get().caseId, stored.section)
       connection?.present({ gesture: { id: own.id, edits: own.edits } })
       frames.ask()
     },
@@ -255,7 +255,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
       if (!mayWrite()) return false
       const before = get().picked
       if (pick) sheet.set({ picked: pick })
-      write(toCase(edits, get().caseId), before, join)
+      write(toCase(edits, get().caseId, stored.section), before, join)
       return true
     },
     gesture,

@@ -87,7 +87,7 @@ export function createSurface(ground: Ground): Surface {
     id: freshId,
     order() {
       counter += 1
-      return `${Date.now().toString(36).padStart(9, '0')}${counter.toString(36).padStart(4, '0')}`
+      return `${Date.now().toString(36).padStart(9, '0')}${counter.toString(36).padStart(4, '0')}V`
     },
     today: () => new Date().toISOString().slice(0, 10),
     who: () => sheet.me()?.name ?? null,
