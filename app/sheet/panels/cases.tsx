@@ -1,12 +1,12 @@
 import { useState } from 'react'
-import type { Case } from '~/section'
+import { type Case, OFF_LISTS, valueAt } from '~/section'
 import { IconButton } from '../shell/sheet-bar'
 import { useSheet, useSheetState } from '../shell/use-sheet'
 import { Box } from './box'
 import { CompareCases } from './compare'
 import { describePath } from './fields/describe'
 import { freshId } from './ids'
-import { nameOf, valueAt } from './paths'
+import { nameOf } from './paths'
 
 /** The chosen case: its name, what it changes, what it leaves out; and all cases side by side. */
 export function CasePanel() {
@@ -81,12 +81,10 @@ function OneCase({ one }: { one: Case }) {
   const units = useSheetState((state) => state.units)
   const [name, setName] = useState<string | null>(null)
   const write = may === 'write'
-  const switchable = [
-    ...section.bodies.map(({ id }) => `bodies.${id}`),
-    ...section.recharge.map(({ id }) => `recharge.${id}`),
-    ...section.features.map(({ id }) => `features.${id}`),
-    ...section.limits.map(({ id }) => `limits.${id}`),
-  ]
+  // What was observed does not change with a "what if".
+  const switchable = OFF_LISTS.filter((list) => list !== 'observations').flatMap((list) =>
+    section[list].map(({ id }) => `${list}.${id}`),
+  )
   return (
     <>
       {write ? (

@@ -41,18 +41,6 @@ export function pickFor(path: string, live: LiveSection): string | null {
   return null
 }
 
-/** Value at a path of the format; undefined where there is none. Lists are entered by id. */
-export function valueAt(section: Section, path: string): unknown {
-  let at: unknown = section
-  for (const step of path.split('.')) {
-    if (Array.isArray(at))
-      at = at.find((one) => typeof one === 'object' && one !== null && 'id' in one && one.id === step)
-    else if (typeof at === 'object' && at !== null) at = Object.entries(at).find(([key]) => key === step)?.[1]
-    else return undefined
-  }
-  return at
-}
-
 /** Name of a thing for people: its own name, or what it is and where. */
 export function nameOf(section: Section, path: string): string {
   const subject = subjectOf(path)

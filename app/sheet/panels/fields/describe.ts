@@ -12,6 +12,8 @@ export function describePath(
 ): { of: string; field: string; show: (value: unknown) => string } {
   if (path === 'surfaceSeepage')
     return { of: 'Whole section', field: 'surface seepage', show: (value) => (value ? 'yes' : 'no') }
+  if (path === 'host')
+    return { of: 'Whole section', field: 'the ground is', show: (value) => materialName(section, value) }
   const subject = subjectOf(path)
   const spec = specAt(section, path, subject)
   return {
@@ -20,7 +22,11 @@ export function describePath(
     show: (value) => {
       if (typeof value === 'number') return spec ? show(value, spec.kind, units) : plain(value)
       if (value === null || value === undefined) return spec?.empty?.means ?? 'not given'
-      return String(value)
+      // A case may give a body or the ground another material.
+      return materialName(section, value)
     },
   }
 }
+
+const materialName = (section: Section, id: unknown) =>
+  section.materials.find((one) => one.id === id)?.name ?? String(id)

@@ -9,15 +9,8 @@ export type Spec = {
   kind: Kind
   /** What leaving it empty means; a field without this may not be emptied. `as` is what is written then. */
   empty?: { means: string; as: null | undefined }
-  /** Says why a number cannot stand here, or null. */
-  refuse?: (value: number) => string | null
   hint?: string
 }
-
-const above0 = (what: string) => (value: number) => (value > 0 ? null : `${what} must be more than 0.`)
-const atLeast0 = (what: string) => (value: number) => (value >= 0 ? null : `${what} cannot be less than 0.`)
-const share = (what: string) => (value: number) =>
-  value > 0 && value < 1 ? null : `${what} is a share of the volume: more than 0, less than 1.`
 
 const direct = { means: 'stands directly against the aquifer', as: null } as const
 const unset = { means: 'not given', as: undefined } as const
@@ -29,7 +22,6 @@ const conductance: Spec = {
   label: 'Conductance',
   kind: 'conductance',
   empty: direct,
-  refuse: above0('A conductance'),
   hint: 'Flow per metre of bank for each metre of head between water and aquifer.',
 }
 
@@ -38,7 +30,6 @@ const MATERIAL: Spec[] = [
     field: 'k',
     label: 'Conductivity',
     kind: 'conductivity',
-    refuse: above0('A conductivity'),
     hint: 'Horizontal, K.',
   },
   {
@@ -46,17 +37,15 @@ const MATERIAL: Spec[] = [
     label: 'Horizontal to vertical',
     kind: 'ratio',
     empty: { means: '1: the same both ways', as: undefined },
-    refuse: above0('The ratio of conductivities'),
   },
   {
     field: 'porosity',
     label: 'Porosity',
     kind: 'ratio',
     empty: unset,
-    refuse: share('Porosity'),
     hint: 'Effective; times of travel hang on it.',
   },
-  { field: 'specificYield', label: 'Specific yield', kind: 'ratio', empty: unset, refuse: share('Specific yield') },
+  { field: 'specificYield', label: 'Specific yield', kind: 'ratio', empty: unset },
 ]
 
 const FEATURES: Record<Feature['kind'], Spec[]> = {
@@ -65,8 +54,8 @@ const FEATURES: Record<Feature['kind'], Spec[]> = {
   trench: [x, { field: 'rate', label: 'Pumped', kind: 'flow', hint: 'Per metre of trench; plus takes water out.' }],
   wall: [
     x,
-    { field: 'thickness', label: 'Thickness', kind: 'length', refuse: above0('A thickness') },
-    { field: 'k', label: 'Conductivity', kind: 'conductivity', refuse: atLeast0('A conductivity') },
+    { field: 'thickness', label: 'Thickness', kind: 'length' },
+    { field: 'k', label: 'Conductivity', kind: 'conductivity' },
   ],
 }
 
@@ -99,14 +88,13 @@ const LIMIT: Spec[] = [
     field: 'clearance',
     label: 'Clearance',
     kind: 'length',
-    refuse: atLeast0('A clearance'),
     hint: 'The water stays this far below the level.',
   },
 ]
 const OBSERVATION: Spec[] = [
   x,
   { field: 'head', label: 'Observed head', kind: 'elevation' },
-  { field: 'sd', label: 'Good to ±', kind: 'length', empty: unset, refuse: above0('A standard deviation') },
+  { field: 'sd', label: 'Good to ±', kind: 'length', empty: unset },
 ]
 
 /** The numbers of whatever a path is about, with the path each stands at. */

@@ -1,11 +1,22 @@
+import { ruleAt, troubleWith, valueAt } from '~/section'
 import { sameMembers, useSheet, useSheetState } from '../../shell/use-sheet'
-import { valueAt } from '../paths'
+import type { Sheet } from '../../state'
 import { show } from './quantities'
 import { QuantityField } from './quantity-field'
 import { SourceNote } from './source-note'
 import type { Spec } from './specs'
 
 type Held = number | null | undefined
+/** Why the section cannot hold this number at one of these paths, in its own words; null when it can. */
+function refusal(sheet: Sheet, paths: string[], value: number): string | null {
+  const { section } = sheet.get().live
+  for (const path of paths) {
+    const rule = ruleAt(section, path)
+    const trouble = rule && troubleWith(rule, value)
+    if (trouble) return trouble
+  }
+  return null
+}
 const held = (value: unknown): Held => (typeof value === 'number' || value === null ? value : undefined)
 
 /**
@@ -43,7 +54,7 @@ export function ValueField({
         units={units}
         value={same ? values[0] : 'several'}
         emptyMeans={spec.empty?.means}
-        refuse={spec.refuse}
+        refuse={(value) => refusal(sheet, paths, value)}
         hint={spec.hint}
         disabled={may === 'read'}
         onCommit={(value) => {

@@ -1,5 +1,6 @@
 import { useSheet, useSheetState } from '../../shell/use-sheet'
-import { SelectField } from '../fields/select-field'
+import { useCaseValue } from '../fields/in-case'
+import { MaterialChoice } from '../fields/material-choice'
 import { VertexTable } from '../table/vertex-table'
 import { Deeds } from './deeds'
 import { MaterialFields } from './materials'
@@ -9,23 +10,18 @@ import { NameAndNote } from './name-note'
 export function BodyParticulars({ id }: { id: string }) {
   const sheet = useSheet()
   const may = useSheetState((state) => state.may)
-  const materials = useSheetState((state) => state.live.section.materials)
   const bodies = useSheetState((state) => state.live.section.bodies)
+  const path = `bodies.${id}`
+  const { value } = useCaseValue(`${path}.material`)
   const body = bodies.find((one) => one.id === id)
   if (!body) return <p className="quiet">It is no longer there.</p>
   const at = bodies.indexOf(body)
-  const path = `bodies.${id}`
+  const material = typeof value === 'string' ? value : body.material
   return (
     <div className="particulars">
       <NameAndNote path={path}>
-        <SelectField
-          label="Material"
-          value={body.material}
-          disabled={may === 'read'}
-          options={materials.map((one) => [one.id, one.name ?? one.id] as const)}
-          onChange={(material) => sheet.edit([{ do: 'set', path: `${path}.material`, value: material }])}
-        />
-        <MaterialFields id={body.material} />
+        <MaterialChoice path={`${path}.material`} label="Material" />
+        <MaterialFields id={material} />
         {bodies.length > 1 && may === 'write' ? (
           <div className="buttons">
             <button

@@ -1,9 +1,9 @@
 import { useState } from 'react'
+import { valueAt } from '~/section'
 import { useSheet, useSheetState } from '../../shell/use-sheet'
 import { conductanceOf, ERNST } from '../conductance'
 import { plain, show, useUnits } from '../fields/quantities'
 import { QuantityField } from '../fields/quantity-field'
-import { valueAt } from '../paths'
 
 /** Works the conductance out from the bed, and writes it with where it came from. */
 export function ConductanceHelper({ path }: { path: string }) {

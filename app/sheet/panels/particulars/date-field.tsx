@@ -1,6 +1,6 @@
 import { useId } from 'react'
+import { valueAt } from '~/section'
 import { useSheet, useSheetState } from '../../shell/use-sheet'
-import { valueAt } from '../paths'
 
 export function DateField({ path, label }: { path: string; label?: string }) {
   const sheet = useSheet()

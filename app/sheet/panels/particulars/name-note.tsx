@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react'
+import { valueAt } from '~/section'
 import { useSheet, useSheetState } from '../../shell/use-sheet'
 import { TextField } from '../fields/text-field'
-import { valueAt } from '../paths'
 
 const textAt = (value: unknown) => (typeof value === 'string' ? value : '')
 

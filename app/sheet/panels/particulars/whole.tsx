@@ -1,6 +1,7 @@
 import { useSheet, useSheetState } from '../../shell/use-sheet'
+import { useCaseValue } from '../fields/in-case'
+import { MaterialChoice } from '../fields/material-choice'
 import { show, useUnits } from '../fields/quantities'
-import { SelectField } from '../fields/select-field'
 import { TextField } from '../fields/text-field'
 
 /** What holds for the whole section. */
@@ -9,22 +10,14 @@ export function SectionParticulars() {
   const units = useUnits()
   const may = useSheetState((state) => state.may)
   const section = useSheetState((state) => state.live.section)
-  const caseOf = useSheetState((state) => state.live.section.cases.find(({ id }) => id === state.caseId) ?? null)
+  const seepage = useCaseValue('surfaceSeepage').value === true
   const read = may === 'read'
   const set = (path: string, value: unknown) => sheet.edit([{ do: 'set', path, value }])
-  const inCase = caseOf?.set.surfaceSeepage
-  const seepage = typeof inCase === 'boolean' ? inCase : section.surfaceSeepage
   return (
     <div className="particulars">
       <TextField label="Title" value={section.title} disabled={read} onCommit={(text) => text && set('title', text)} />
       <TextField label="Datum" value={section.datum} disabled={read} onCommit={(text) => set('datum', text)} />
-      <SelectField
-        label="The ground is"
-        value={section.host}
-        disabled={read}
-        options={section.materials.map((one) => [one.id, one.name ?? one.id] as const)}
-        onChange={(host) => set('host', host)}
-      />
+      <MaterialChoice path="host" label="The ground is" />
       <label className="check">
         <input
           type="checkbox"

@@ -1,8 +1,8 @@
 import type { Body, Feature, Section } from '~/section'
-import { useSheet, useSheetState } from '../../shell/use-sheet'
+import { useSheetState } from '../../shell/use-sheet'
 import { Box } from '../box'
 import { CasePanel } from '../cases'
-import { SelectField } from '../fields/select-field'
+import { MaterialChoice } from '../fields/material-choice'
 import { FEATURE_SPECS, LIMIT_SPECS, MATERIAL_SPECS, OBSERVATION_SPECS, RECHARGE_SPECS } from '../fields/specs'
 import { freshId } from '../ids'
 import { BankParticulars } from '../particulars/bank'
@@ -15,14 +15,13 @@ import { VertexTable } from './vertex-table'
 /** The same section, typed: everything that can be drawn stands here in tables that a keyboard and a screen reader can walk. */
 export function TableView() {
   const section = useSheetState((state) => state.live.section)
-  const may = useSheetState((state) => state.may)
   const caseId = useSheetState((state) => state.caseId)
   const caseOf = section.cases.find(({ id }) => id === caseId)
   return (
     <div className="table-view">
       {caseOf ? (
         <p className="quiet">
-          Values of the case “{caseOf.name ?? caseOf.id}”. Shapes, names and materials are common to all cases.
+          Values of the case “{caseOf.name ?? caseOf.id}”. Shapes, names and observations are common to all cases.
         </p>
       ) : null}
       <div className="table-columns">
@@ -52,7 +51,7 @@ export function TableView() {
         specs={MATERIAL_SPECS}
         fresh={() => newMaterial(section.materials)}
       />
-      <Bodies section={section} write={may === 'write'} />
+      <Bodies section={section} />
       <ObjectTable
         caption="Recharge zones"
         list="recharge"
@@ -157,9 +156,7 @@ export function newFeature(section: Section, kind: Feature['kind']): Feature {
   }
 }
 
-function Bodies({ section, write }: { section: Section; write: boolean }) {
-  const sheet = useSheet()
-  const materials = section.materials.map((one) => [one.id, one.name ?? one.id] as const)
+function Bodies({ section }: { section: Section }) {
   return (
     <>
       <ObjectTable<Body>
@@ -171,13 +168,10 @@ function Bodies({ section, write }: { section: Section; write: boolean }) {
         extra={{
           label: 'material',
           cell: (body) => (
-            <SelectField
+            <MaterialChoice
+              path={`bodies.${body.id}.material`}
               label={`Material of ${body.name ?? body.id}`}
               hideLabel
-              value={body.material}
-              options={materials}
-              disabled={!write}
-              onChange={(material) => sheet.edit([{ do: 'set', path: `bodies.${body.id}.material`, value: material }])}
             />
           ),
         }}
