@@ -13,8 +13,8 @@ import { section, sectionSnapshot, sectionUpdate } from './schema'
  */
 
 export type NewUpdate = { sectionId: string; epoch: number; update: Uint8Array; userId: string | null }
-/** What an append did for one section: `before` is the last seq that was stored before it (0: none). */
-export type Appended = { sectionId: string; before: number; last: number }
+/** What an append did for one section: `before` is the last seq that was stored before it (0: none; null: not asked). */
+export type Appended = { sectionId: string; before: number | null; last: number }
 
 /** The section is not there, or its epoch has moved on (an earlier version was restored); nothing was stored. */
 export class NotAppended extends Error {
@@ -44,7 +44,12 @@ export const KEEP_ROWS_DAYS = 180
  * Store updates of any number of sections in one transaction, in the order given.
  * @throws NotAppended when one of the sections is gone or has another epoch; then nothing at all is stored.
  */
-export async function appendUpdates(db: Executor, updates: NewUpdate[]): Promise<Appended[]> {
+export async function appendUpdates(
+  db: Executor,
+  updates: NewUpdate[],
+  /** Also say what stood before; needed when other processes append to the same sections. */
+  options: { before: boolean } = { before: true },
+): Promise<Appended[]> {
   if (updates.length === 0) return []
   const ids = [...new Set(updates.map((u) => u.sectionId))].sort()
   return db.transaction(async (tx) => {
@@ -64,14 +69,18 @@ export async function appendUpdates(db: Executor, updates: NewUpdate[]): Promise
     ]
     if (gone.length || stale.length) throw new NotAppended(gone, stale)
 
-    const before = new Map((await lastSeqs(tx, ids)).map((row) => [row.sectionId, row.seq]))
+    const before = new Map(options.before ? (await lastSeqs(tx, ids)).map((row) => [row.sectionId, row.seq]) : [])
     const [result] = await tx.insert(sectionUpdate).values(updates)
     const last = new Map<string, number>()
     // One insert of known length draws consecutive numbers (innodb_autoinc_lock_mode 0 and 1; MariaDB's default is 1).
     updates.forEach((update, i) => {
       last.set(update.sectionId, result.insertId + i)
     })
-    return ids.map((id) => ({ sectionId: id, before: before.get(id) ?? 0, last: last.get(id) ?? 0 }))
+    return ids.map((id) => ({
+      sectionId: id,
+      before: options.before ? (before.get(id) ?? 0) : null,
+      last: last.get(id) ?? 0,
+    }))
   })
 }
 
@@ -178,52 +187,61 @@ export function flaw(update: Uint8Array): string | null {
  */
 export async function loadDoc(db: Executor, sectionId: string): Promise<Loaded | null> {
   const found = await loadParts(db, sectionId)
-  if (!found) return null
+  return found && assemble(db, sectionId, found)
+}
+
+/** Builds the document from its stored parts. @throws LogUnreadable as `loadDoc`. */
+export async function assemble(db: Executor, sectionId: string, found: Parts): Promise<Loaded> {
   const { epoch, seq, snapshot, rows } = found
   if (!snapshot && rows.length === 0) throw new LogUnreadable(sectionId, 'nothing is stored')
-
-  const damaged: Loaded['damaged'] = []
-  let parts: Uint8Array[] = []
-  if (snapshot) {
-    const broken = flaw(snapshot)
-    if (broken === null) parts.push(snapshot)
-    else {
-      const older = await rowsBefore(db, sectionId, epoch, rows[0]?.seq ?? Number.MAX_SAFE_INTEGER)
-      if (older.length === 0) throw new LogUnreadable(sectionId, `the snapshot is broken (${broken})`)
-      damaged.push({ seq: 0, why: `the snapshot is broken (${broken}); read from the log instead` })
-      rows.unshift(...older)
-    }
-  }
-  for (const row of rows) {
-    const broken = flaw(row.update)
-    if (broken === null) parts.push(row.update)
-    else damaged.push({ seq: row.seq, why: broken })
-  }
-
-  let doc = new Y.Doc()
+  const parts = [...(snapshot ? [snapshot] : []), ...rows.map((row) => row.update)]
+  const doc = new Y.Doc()
   try {
     doc.transact(() => {
       for (const part of parts) Y.applyUpdate(doc, part, 'log')
     }, 'log')
+    return { doc, epoch, seq, parts, rows: rows.length, damaged: [] }
   } catch {
-    // Decodable yet impossible to apply: find the culprit by applying one at a time to a fresh document.
-    const kept: Uint8Array[] = []
-    doc = new Y.Doc()
-    for (const part of parts) {
-      try {
-        Y.applyUpdate(doc, part, 'log')
-        kept.push(part)
-      } catch (error) {
-        damaged.push({ seq: 0, why: why(error) })
-        doc = new Y.Doc()
-        for (const good of kept) Y.applyUpdate(doc, good, 'log')
-      }
-    }
-    parts = kept
+    doc.destroy()
+    return assembleDamaged(db, sectionId, found)
   }
-  if (damaged.some((d) => d.why.startsWith('the snapshot')) && doc.store.pendingStructs !== null)
+}
+
+/** Something stored cannot be read: finds out what, leaves it out, and makes up for a broken snapshot from the kept rows. */
+async function assembleDamaged(db: Executor, sectionId: string, found: Parts): Promise<Loaded> {
+  const { epoch, seq, snapshot } = found
+  const rows = [...found.rows]
+  const damaged: Loaded['damaged'] = []
+  const sound: { seq: number; update: Uint8Array }[] = []
+  const broken = snapshot && flaw(snapshot)
+  if (snapshot && broken === null) sound.push({ seq: 0, update: snapshot })
+  else if (snapshot) {
+    const older = await rowsBefore(db, sectionId, epoch, rows[0]?.seq ?? Number.MAX_SAFE_INTEGER)
+    if (older.length === 0) throw new LogUnreadable(sectionId, `the snapshot is broken (${broken})`)
+    damaged.push({ seq: 0, why: `the snapshot is broken (${broken}); read from the log instead` })
+    rows.unshift(...older)
+  }
+  for (const row of rows) {
+    const wrong = flaw(row.update)
+    if (wrong === null) sound.push(row)
+    else damaged.push({ seq: row.seq, why: wrong })
+  }
+  // Decodable does not mean applicable: one at a time, starting afresh without the culprit.
+  let doc = new Y.Doc()
+  const kept: Uint8Array[] = []
+  for (const part of sound) {
+    try {
+      Y.applyUpdate(doc, part.update, 'log')
+      kept.push(part.update)
+    } catch (error) {
+      damaged.push({ seq: part.seq, why: why(error) })
+      doc = new Y.Doc()
+      for (const good of kept) Y.applyUpdate(doc, good, 'log')
+    }
+  }
+  if (broken && doc.store.pendingStructs !== null)
     throw new LogUnreadable(sectionId, 'the snapshot is broken and the log does not reach back to the beginning')
-  return { doc, epoch, seq, parts, rows: rows.length, damaged }
+  return { doc, epoch, seq, parts: kept, rows: rows.length, damaged }
 }
 
 const rowsBefore = (db: Executor, sectionId: string, epoch: number, before: number) =>

@@ -34,6 +34,8 @@ export async function automaticVersion(
   db: Executor,
   sectionId: string,
   everyMinutes = VERSION_EVERY_MINUTES,
+  /** The state, when the caller has it in memory; else it is read from the log. */
+  given?: { state: Uint8Array; epoch: number; seq: number },
 ): Promise<string | null> {
   return db.transaction(async (tx) => {
     const locked = await lockSection(tx, sectionId)
@@ -45,8 +47,10 @@ export async function automaticVersion(
       .orderBy(desc(sectionVersion.createdAt))
       .limit(1)
     if (last && Date.now() - last.createdAt.getTime() < everyMinutes * 60_000) return null
-    const stored = await loadState(tx, sectionId)
-    if (!stored || stored.damaged.length || (last && last.epoch === stored.epoch && last.seq >= stored.seq)) return null
+    const loaded = given ? null : await loadState(tx, sectionId)
+    const stored = given ?? (loaded?.damaged.length ? null : loaded)
+    if (!stored || stored.epoch !== locked.epoch || (last && last.epoch === stored.epoch && last.seq >= stored.seq))
+      return null
     const hand = await lastHand(tx, sectionId, stored.epoch)
     const id = randomUUID()
     await tx.insert(sectionVersion).values({
@@ -84,18 +88,16 @@ export async function nameVersion(
     if (!stored) return null
     const { epoch, seq, state } = stored
     const id = randomUUID()
-    await tx
-      .insert(sectionVersion)
-      .values({
-        id,
-        sectionId: version.sectionId,
-        epoch,
-        seq,
-        kind: 'named',
-        name: version.name,
-        state,
-        createdBy: version.userId,
-      })
+    await tx.insert(sectionVersion).values({
+      id,
+      sectionId: version.sectionId,
+      epoch,
+      seq,
+      kind: 'named',
+      name: version.name,
+      state,
+      createdBy: version.userId,
+    })
     return { id, epoch, seq }
   })
 }

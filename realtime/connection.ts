@@ -14,7 +14,7 @@ const short = (why: string) =>
         .toString('utf8')
         .replace(/\uFFFD+$/, '')}…`
 
-const bytesOf = (data: RawData): Uint8Array => {
+export const bytesOf = (data: RawData): Uint8Array => {
   if (Array.isArray(data)) return Buffer.concat(data)
   return data instanceof ArrayBuffer ? new Uint8Array(data) : data
 }
@@ -58,11 +58,13 @@ export class Connection implements Member {
   }
 
   /** From now on frames are read. */
-  enter(room: Room, may: 'write' | 'read') {
+  enter(room: Room, may: 'write' | 'read', earlier: { data: RawData; isBinary: boolean }[] = []) {
     this.room = room
     this.may = may
     this.socket.on('message', (data, isBinary) => this.hear(data, isBinary))
     room.join(this)
+    for (const { data, isBinary } of earlier) this.hear(data, isBinary)
+    this.socket.resume()
   }
 
   private hear(data: RawData, isBinary: boolean) {

@@ -40,6 +40,7 @@ export const LIMITS = {
   idleRoom: 30_000,
   /** Rows past the snapshot that make a fold worth it while people draw, and when they have left. */
   foldRows: 500,
+  foldEvery: 10_000,
   foldRowsIdle: 20,
   /** Presence of several people goes out together this often in rooms of more than `crowd`. */
   presenceTick: 20,

@@ -69,6 +69,7 @@ export class Room implements Source {
   readonly damaged: boolean
   rowsSinceFold: number
   changedSinceVersion = false
+  foldedAt = 0
   private waiting: Item[] = []
   private underWay: Item[] = []
   private heldBytes = 0
@@ -248,18 +249,25 @@ export class Room implements Source {
     this.waitingSince = this.waiting.some((item) => item.is === 'edit') ? Date.now() : null
     if (done) {
       // Somebody else's rows between what we know and ours: we still know only the former.
-      if (done.before === this.known) this.known = done.last
+      if (done.before === null || done.before === this.known) this.known = done.last
       else this.around.behind(this)
       this.rowsSinceFold += edits.length
       this.changedSinceVersion = true
     }
-    const acknowledged = new Map<Member, Uint8Array>()
-    for (const item of items) {
-      if (item.is === 'state') item.to.send(item.frames[0] as Uint8Array)
-      if (item.is === 'state') for (const frame of item.frames.slice(1)) item.to.send(frame)
-      else if (item.by) acknowledged.set(item.by, acknowledgement(item.n, item.refused))
+    const acknowledged = new Map<Member, { n: number; refused: number }>()
+    const acknowledge = (member: Member) => {
+      const last = acknowledged.get(member)
+      if (last) member.send(acknowledgement(last.n, last.refused))
     }
-    for (const [member, frame] of acknowledged) member.send(frame)
+    for (const item of items) {
+      if (item.is === 'state') for (const frame of item.frames) item.to.send(frame)
+      else if (item.by) {
+        // One acknowledgement for many messages, but never across a refusal: the page must know what came after it.
+        if (acknowledged.has(item.by) && acknowledged.get(item.by)?.refused !== item.refused) acknowledge(item.by)
+        acknowledged.set(item.by, { n: item.n, refused: item.refused })
+      }
+    }
+    for (const member of acknowledged.keys()) acknowledge(member)
     this.relay(edits)
     if (done) {
       this.around.onStored(this, done.last)

@@ -2,11 +2,10 @@ import { CLOSE } from '~/live/codes'
 import type { Connection as Db } from '../drizzle/client'
 import {
   appendUpdates,
-  compact,
+  assemble,
   KEEP_ROWS_DAYS,
   LogUnreadable,
   lastSeqs,
-  loadDoc,
   loadParts,
   saveSnapshot,
 } from '../drizzle/log'
@@ -22,11 +21,16 @@ type Options = {
   db: Db['db']
   limits: Limits
   log: Log
+  /** Other sidecars append to the same sections. */
+  shared: boolean
   onStored(sectionId: string, seq: number): void
   onPresence(sectionId: string, entries: PresenceEntry[]): void
   onOpen(sectionId: string): void
   onClose(sectionId: string): void
 }
+
+/** Handed the stored parts as soon as they are read, before the document is built; resolves when they have left. */
+export type Early = (parts: Uint8Array[]) => Promise<void>
 
 /** Every room of this process: loaded once, closed when long empty, kept up with the log. */
 export class Rooms {
@@ -39,7 +43,11 @@ export class Rooms {
   private readonly lastVersion = new Map<string, number>()
 
   constructor(private readonly options: Options) {
-    this.writer = new Writer({ append: (updates) => appendUpdates(options.db, updates), lanes: 4, log: options.log })
+    this.writer = new Writer({
+      append: (updates) => appendUpdates(options.db, updates, { before: options.shared }),
+      lanes: 4,
+      log: options.log,
+    })
   }
 
   start() {
@@ -57,7 +65,7 @@ export class Rooms {
   }
 
   /** The section's room of that epoch, loaded from the log when it is not open. @throws Refusal when it cannot be. */
-  async enter(sectionId: string, epoch: number): Promise<Room> {
+  async enter(sectionId: string, epoch: number, early: Early = async () => {}): Promise<Room> {
     let loading = this.rooms.get(sectionId)
     if (loading) {
       const room = await loading
@@ -68,7 +76,7 @@ export class Rooms {
       loading = this.rooms.get(sectionId)
     }
     if (!loading) {
-      loading = this.load(sectionId)
+      loading = this.load(sectionId, early)
       this.rooms.set(sectionId, loading)
       loading.then(
         (room) => this.open.set(sectionId, room),
@@ -78,12 +86,16 @@ export class Rooms {
     return loading
   }
 
-  private async load(sectionId: string): Promise<Room> {
+  private async load(sectionId: string, early: Early): Promise<Room> {
     const { db, log, limits } = this.options
     this.options.onOpen(sectionId)
     try {
-      const loaded = await loadDoc(db, sectionId)
-      if (!loaded) throw new Refusal(CLOSE.gone)
+      const found = await loadParts(db, sectionId)
+      if (!found) throw new Refusal(CLOSE.gone)
+      // Building a large document holds up this process for a while; the page can build its own meanwhile.
+      const parts = [...(found.snapshot ? [found.snapshot] : []), ...found.rows.map((row) => row.update)]
+      await Promise.race([early(parts), new Promise((r) => setTimeout(r, 200))])
+      const loaded = await assemble(db, sectionId, found)
       for (const { seq, why } of loaded.damaged)
         log.error({ sectionId, seq, why }, 'a stored row cannot be read; left out')
       return new Room(sectionId, loaded, {
@@ -172,8 +184,8 @@ export class Rooms {
   private async version(room: Room) {
     if (!room.changedSinceVersion) return
     room.changedSinceVersion = false
-    await automaticVersion(this.options.db, room.sectionId)
     this.lastVersion.set(room.sectionId, Date.now())
+    await automaticVersion(this.options.db, room.sectionId, undefined, room.snapshot())
   }
 
   /** One background job a section at a time; a second one asked for meanwhile is not needed. */
@@ -213,12 +225,20 @@ export class Rooms {
 
   private retire(room: Room) {
     this.drop(room)
-    const { changedSinceVersion, rowsSinceFold, sectionId } = room
+    this.job(room.sectionId, this.farewell(room))
     room.shut(CLOSE.drain)
-    this.job(sectionId, async () => {
-      if (rowsSinceFold >= this.options.limits.foldRowsIdle) await compact(this.options.db, sectionId)
-      if (changedSinceVersion) await automaticVersion(this.options.db, sectionId)
-    })
+  }
+
+  /** What is left to do for a room nobody is in: a short log, and a version when something was drawn. */
+  private farewell(room: Room): () => Promise<void> {
+    const { sectionId, changedSinceVersion: changed } = room
+    const fold = room.rowsSinceFold >= this.options.limits.foldRowsIdle
+    if (room.damaged || (!fold && !changed)) return async () => {}
+    const snapshot = room.snapshot()
+    return async () => {
+      if (fold) await saveSnapshot(this.options.db, { sectionId, keepDays: KEEP_ROWS_DAYS, ...snapshot })
+      if (changed) await automaticVersion(this.options.db, sectionId, undefined, snapshot)
+    }
   }
 
   private drop(room: Room) {
@@ -234,13 +254,10 @@ export class Rooms {
     if (this.timer) clearInterval(this.timer)
     const settled = await this.writer.settle(within)
     const rooms = [...this.open.values()]
-    for (const room of rooms) room.shut(CLOSE.drain)
-    if (settled)
-      for (const room of rooms)
-        if (room.rowsSinceFold >= this.options.limits.foldRowsIdle && !room.damaged)
-          this.job(room.sectionId, async () => {
-            await compact(this.options.db, room.sectionId)
-          })
+    for (const room of rooms) {
+      if (settled && !room.closed) this.job(room.sectionId, this.farewell(room))
+      room.shut(CLOSE.drain)
+    }
     await Promise.all([...this.jobs.values(), ...[...this.fetching.values()].map((f) => f.done)])
     this.writer.stop()
     this.open.clear()

@@ -8,6 +8,7 @@ import { AUDIENCE, CLOSE, SAYS } from '~/live/codes'
 import type { Connection as Db } from '../drizzle/client'
 import { askFor, originFits, Refusal, readTicket, standing } from './admit'
 import { Connection, closeSocket } from './connection'
+import { FirstWords } from './first-words'
 import { LIMITS, type Limits } from './limits'
 import { type Log, log as standardLog } from './log'
 import { meetPeers, NO_PEERS, type Peers } from './peers'
@@ -69,6 +70,7 @@ export function create(deps: Deps): Sidecar {
     db,
     limits,
     log,
+    shared: Boolean(deps.redisUrl),
     onStored: (sectionId, seq) => peers.stored(sectionId, seq),
     onPresence: (sectionId, entries) => peers.presence(sectionId, entries),
     onOpen: (sectionId) => peers.open(sectionId),
@@ -183,8 +185,9 @@ export function create(deps: Deps): Sidecar {
       throw new Refusal(CLOSE.tooMany, 'Too many sheets are open. Close some and try again.')
     const key = randomUUID()
     const answer = await ask(askFor(key, claims))
-    const first = standing(claims, answer, claims.epoch)
-    const room = await rooms.enter(claims.section, claims.epoch)
+    const may = standing(claims, answer, claims.epoch)
+    const words = new FirstWords(socket)
+    const room = await rooms.enter(claims.section, claims.epoch, (parts) => words.answer(parts))
     if (room.epoch !== claims.epoch) throw new Refusal(CLOSE.epoch)
     if (gone() || draining) return null
     const who = { id: holder, name: claims.name, ink: claims.ink, kind: claims.who.kind }
@@ -194,10 +197,9 @@ export function create(deps: Deps): Sidecar {
       connections.delete(key)
       room.leave(connection)
     })
-    connection.enter(room, first)
+    connection.enter(room, may, words.rest())
     const others = peers.others(claims.section)
     if (others.length) connection.sendPresence(presenceFrame(others))
-    socket.resume()
     return connection
   }
 

@@ -58,7 +58,12 @@ describe('random schedules converge', () => {
         if (random.bool(0.3)) await new Promise((r) => setTimeout(r, random.int(8)))
       }
       if (closed) pages[closed.n] = make(closed.n, closed.doc)
-      await until('everything is stored', () => pages.every((p) => p.state.kind === 'stored'), 30_000)
+      await until('everything is stored', () => pages.every((p) => p.state.kind === 'stored'), 6_000).catch(
+        (error: unknown) => {
+          const states = pages.map((p) => JSON.stringify({ ...p.state, may: p.may, codes: p.codes }))
+          throw new Error(`${String(error)}: ${states.join(' ')}`)
+        },
+      )
       const side = (doc: Y.Doc) => JSON.stringify(Object.entries(doc.getMap('m').toJSON()).sort())
       await until('every side is the same', () => new Set(pages.map((p) => side(p.doc))).size === 1)
       const [first] = pages as [Page]

@@ -176,6 +176,7 @@ class SheetConnection implements Connection {
     if (this.epoch === null) {
       this.epoch = ticket.epoch
       await this.openLocal()
+      if (this.closed) return
     }
     if (ticket.epoch !== this.epoch) return this.refuse(CLOSE.epoch)
     this.who = ticket.who
@@ -309,6 +310,9 @@ class SheetConnection implements Connection {
     if (provider?.wsconnected) this.lastHeard = Math.max(this.lastHeard, provider.wsLastMessageReceived)
     // A line that stays mute, half open included, is hung up; so is one that never opens.
     if (provider?.ws && now - this.lastHeard > SILENCE) provider.disconnect()
+    // Neither confirmed nor told why: a fresh connection sends everything again and gets a fresh answer.
+    const mute = this.unconfirmedSince !== null && now - this.unconfirmedSince > 2 * UNCONFIRMED
+    if (this.synced && mute && !this.stalled && this.may === 'write') provider?.disconnect()
     this.say()
   }
 
