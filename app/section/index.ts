@@ -18,7 +18,17 @@ export {
   SECTION,
 } from './rules/fields'
 export { LIMITS, SLACK } from './rules/limits'
-export { casePathsOf, caseRuleAt, isPathOf, OFF_LISTS, objectAt, placeOf, ruleAt, valueAt } from './rules/paths'
+export {
+  casePathsOf,
+  caseRuleAt,
+  caseRuleFor,
+  isPathOf,
+  OFF_LISTS,
+  objectAt,
+  placeOf,
+  ruleAt,
+  valueAt,
+} from './rules/paths'
 export {
   isDate,
   isId,

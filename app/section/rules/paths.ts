@@ -57,16 +57,24 @@ const BANK_IN_CASE: readonly string[] = ['stage', 'conductance', 'bed', 'rate'] 
 
 /**
  * What a case may set at a path; null when a case cannot hold a value there. The drawing's shape (ground, base, outlines, the
- * banks' places and kinds), names and notes are common to all cases.
+ * banks' places and kinds), names and notes are common to all cases. `kind`: of the bank or feature the path leads to; anything
+ * but undefined for another object that is there.
  */
+export function caseRuleFor(path: string, kind: unknown): Rule | null {
+  const [head, id = '', field = '', more] = path.split('.')
+  if (path === 'host' || path === 'surfaceSeepage') return SECTION[path]
+  if (more !== undefined || kind === undefined) return null
+  if (head === 'left' || head === 'right')
+    return field === '' && BANK_IN_CASE.includes(id) ? fieldRule(bankFields(kind), id) : null
+  return isList(head) && IN_CASE[head]?.includes(field) ? fieldRule(objectFields(head, kind), field) : null
+}
+
+/** As `caseRuleFor`, in a section. */
 export function caseRuleAt(section: Section, path: string): Rule | null {
-  const [head, id = '', field = ''] = path.split('.')
-  const settable =
-    path === 'host' ||
-    path === 'surfaceSeepage' ||
-    ((head === 'left' || head === 'right') && BANK_IN_CASE.includes(id)) ||
-    (isList(head) && (IN_CASE[head]?.includes(field) ?? false))
-  return settable ? ruleAt(section, path) : null
+  const [head, id = ''] = path.split('.')
+  if (head === 'left' || head === 'right') return caseRuleFor(path, section[head].kind)
+  const object = isList(head) ? objectAt(section, head, id) : undefined
+  return caseRuleFor(path, object && ('kind' in object ? object.kind : 'object'))
 }
 
 /** Every path a case may set in this section, in the order of the document. */
