@@ -203,6 +203,17 @@ export function solveGeneral(section: Section, ground: Ground, options: { nodes?
     if (size > room) break
     const coarse = inner
     to(parts)
+    if (!answer.converged && coarse.closed) {
+      // The finer mesh would not close: stay with the one that did, and say how far off it may be.
+      inner = coarse
+      const off = Number.isNaN(error.head) ? Math.max(total, 10 * goal) : error.head
+      return {
+        inner,
+        goal,
+        converged: true,
+        error: { head: off, flow: error.flow || 0, nodes: coarse.net.nodes, refinements: refinements - 1 },
+      }
+    }
     goal = goalOf(inner.h)
     error = differences(coarse, inner, parts)
     if (last && error.head <= goal) break

@@ -15,6 +15,8 @@ export const REACH = { plain: 0, wall: 1, wet: 2, dry: 3 } as const
  */
 export type Inner = {
   exact: boolean
+  /** Whether the equations closed. */
+  closed: boolean
   /** The section with the case's values in it. */
   section: Section
   ground: Ground
@@ -111,7 +113,20 @@ export function makeInner(section: Section, ground: Ground, net: Net, answer: Ne
   }
   before[0] = after[0]!
   after[nodes - 1] = before[nodes - 1]!
-  return { exact, section, ground, net, h, before, after, state, rest: answer.rest, reach, pools: answer.pools }
+  return {
+    exact,
+    closed: answer.converged,
+    section,
+    ground,
+    net,
+    h,
+    before,
+    after,
+    state,
+    rest: answer.rest,
+    reach,
+    pools: answer.pools,
+  }
 }
 
 /** The link that holds x, never a wall; at a node the link to the right, or to the left with `side` 'left'. */

@@ -1,6 +1,7 @@
 // biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
 import { headOfPotential, potential, transmissivity } from '../ground/columns'
 import { solveTridiagonal } from '../linear/tridiagonal'
+import { closeFlows } from './continuity'
 import { type Net, sinkFlow, sinkSlope } from './net'
 import { emptyStillPools } from './pools'
 
@@ -98,9 +99,24 @@ function workspace(n: number): Work {
 
 /** Below this share of `reach` a falling thickness goes to 0 at once. */
 const DRY = 1e-5
+/** Node steps after which the walk in time gives up: about half a second. */
+const PATIENCE = 3e6
+/** A flow is known no better than this share of the head that drives it. */
+const ROUNDING = 2e-15
 
-/** Flows, balances and states at the present heads. Returns the worst balance of the nodes that are free, m²/d. */
-function balance(net: Net, h: Float64Array, q: Float64Array, rest: Float64Array, state: Uint8Array, w: Work): number {
+/**
+ * Flows, balances and states at the present heads. Returns the worst balance of the nodes that are free, m²/d, less what
+ * rounding alone may leave there.
+ */
+function balance(
+  net: Net,
+  h: Float64Array,
+  q: Float64Array,
+  rest: Float64Array,
+  state: Uint8Array,
+  w: Work,
+  reach: number,
+): number {
   const { nodes, links } = net
   for (let i = 0; i < nodes; i++) {
     rest[i] = sinkFlow(net, i, h[i]!) - net.supply[i]!
@@ -117,6 +133,9 @@ function balance(net: Net, h: Float64Array, q: Float64Array, rest: Float64Array,
     w.lower[j + 1] = -flux.left
   }
   let worst = 0
+  let height = reach
+  for (let i = 0; i < nodes; i++) if (h[i]! - net.base[i]! > height) height = h[i]! - net.base[i]!
+  const rounding = height * ROUNDING
   for (let i = 0; i < nodes; i++) {
     const r = rest[i]!
     const s = h[i]! - net.base[i]!
@@ -124,7 +143,10 @@ function balance(net: Net, h: Float64Array, q: Float64Array, rest: Float64Array,
     if (!Number.isNaN(net.held[i]!)) now = STATE.held
     else if (h[i]! >= net.upper[i]! && r < 0) now = STATE.upper
     else if (s <= 0 && r >= 0) now = STATE.dry
-    else if (Math.abs(r) > worst) worst = Math.abs(r)
+    else {
+      const left = Math.abs(r) - rounding * w.diagonal[i]!
+      if (left > worst) worst = left
+    }
     state[i] = now
   }
   return worst
@@ -164,11 +186,11 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
     for (let k = 0; k < limit; k++) {
       iterations++
       const moved = iterate(net, h, q, rest, state, reach, per, before)
-      if (moved.step <= 1e-11 * reach && moved.worst <= 1e-10 * moved.scale + moved.floor) return true
+      if (moved.step <= 1e-11 * reach && moved.worst <= 1e-10 * moved.scale) return true
       // No step left that a number of this size can show: the flows' own rounding is all that remains.
       if (moved.step <= 1e-13 * reach && moved.worst <= 1e-7 * moved.scale) return true
       // Rounding floor: the step no longer shrinks although the balance is closed.
-      if (moved.step <= 1e-8 * reach && moved.worst <= 1e-9 * moved.scale + moved.floor && ++settled >= 3) return true
+      if (moved.step <= 1e-8 * reach && moved.worst <= 1e-9 * moved.scale && ++settled >= 3) return true
     }
     return false
   }
@@ -176,6 +198,7 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
   // Newton doubles the digits: one step more costs little and leaves rounding only.
   if (converged && moved.step > 0) iterate(net, h, q, rest, state, reach, 0, before)
   if (!converged) {
+    const started = iterations
     // Walk there in time from the guess: each step is an easier problem; steps grow until they no longer matter.
     for (let i = 0; i < nodes; i++) {
       h[i] = Number.isNaN(net.held[i]!) ? Math.max(net.base[i]!, Math.min(guess[i]!, net.upper[i]!)) : net.held[i]!
@@ -184,11 +207,11 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
     for (let i = 0; i < nodes; i++) width += net.width[i]!
     let rate = (1e3 * moved.diagonal) / (width / nodes)
     let growth = 10
-    for (let k = 0; k < 150 && !converged; k++) {
+    for (let k = 0; k < 150 && !converged && (iterations - started) * nodes < PATIENCE; k++) {
       before.set(h)
       if (run(15, rate)) {
-        const worst = balance(net, h, q, rest, state, workspace(nodes))
-        converged = worst <= 1e-9 * flowScale(net, q) + moved.floor
+        const worst = balance(net, h, q, rest, state, workspace(nodes), reach)
+        converged = worst <= 1e-9 * flowScale(net, q)
         rate /= growth
         if (converged) {
           before.set(h)
@@ -201,9 +224,10 @@ export function solveNet(net: Net, guess: Float64Array, reach: number): NetAnswe
       }
     }
   }
-  balance(net, h, q, rest, state, workspace(nodes))
+  balance(net, h, q, rest, state, workspace(nodes), reach)
   const answer: NetAnswer = { h, q, state, rest, converged, iterations, pools: [] }
-  if (converged) answer.pools = emptyStillPools(net, answer, 1e-9 * flowScale(net, q) + 100 * moved.floor)
+  if (converged) closeFlows(net, answer, conductsOf(net, h))
+  if (converged) answer.pools = emptyStillPools(net, answer, 1e-9 * flowScale(net, q) + 1e-13 * moved.diagonal * reach)
   return answer
 }
 
@@ -230,9 +254,18 @@ function throughPotential(net: Net, i: number, h: number, delta: number): number
   return Math.max(best, Math.min(delta, 0.01 * s))
 }
 
-/** Largest step (m), worst balance, flow that matters, rounding of the flows (m²/d), largest of the matrix (m/d). */
-type Moved = { step: number; worst: number; scale: number; floor: number; diagonal: number }
-const moved: Moved = { step: 0, worst: 0, scale: 0, floor: 0, diagonal: 0 }
+function conductsOf(net: Net, h: Float64Array): Float64Array {
+  const conducts = new Float64Array(net.links)
+  for (let j = 0; j < net.links; j++) {
+    linkFlux(net, j, h[j]!, h[j + 1]!)
+    conducts[j] = Math.max(flux.left, -flux.right)
+  }
+  return conducts
+}
+
+/** Largest step (m), worst balance, flow that matters (m²/d), largest of the matrix (m/d). */
+type Moved = { step: number; worst: number; scale: number; diagonal: number }
+const moved: Moved = { step: 0, worst: 0, scale: 0, diagonal: 0 }
 
 function iterate(
   net: Net,
@@ -246,11 +279,12 @@ function iterate(
 ): Moved {
   const { nodes } = net
   const w = workspace(nodes)
-  moved.worst = balance(net, h, q, rest, state, w)
+  moved.worst = balance(net, h, q, rest, state, w, reach)
   moved.scale = flowScale(net, q)
   if (per > 0) {
     // S/Δt per node; the balance to close then holds the storage too.
     let worst = 0
+    const rounding = reach * ROUNDING
     for (let i = 0; i < nodes; i++) {
       const storage = per * Math.max(net.width[i]!, 1e-9)
       const change = storage * (h[i]! - before[i]!)
@@ -263,22 +297,19 @@ function iterate(
       else if (s <= 0 && r >= 0) state[i] = STATE.dry
       else {
         state[i] = STATE.free
-        if (Math.abs(r) > worst) worst = Math.abs(r)
+        const left = Math.abs(r) - rounding * w.diagonal[i]!
+        if (left > worst) worst = left
       }
     }
     moved.worst = worst
   }
   let diagonal = 0
   for (let i = 0; i < nodes; i++) if (w.diagonal[i]! > diagonal) diagonal = w.diagonal[i]!
-  const floor = diagonal * 1e-14 + 1e-300
-  let height = reach
-  for (let i = 0; i < nodes; i++) if (h[i]! - net.base[i]! > height) height = h[i]! - net.base[i]!
-  moved.floor = diagonal * height * 2e-15
   moved.diagonal = diagonal
   for (let i = 0; i < nodes; i++) {
     if (state[i] === STATE.free) {
       w.right[i] = -rest[i]!
-      w.diagonal[i] = w.diagonal[i]! + floor
+      w.diagonal[i] = w.diagonal[i]! + 1e-300
       if (i === 0) w.lower[i] = 0
       if (i === nodes - 1) w.upper[i] = 0
     } else {

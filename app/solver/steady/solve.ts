@@ -140,6 +140,13 @@ function report(caseId: string | null, inner: Inner, method: Method, error: Gene
 
 function placeWarnings(answer: Solved, section: Section): Problem[] {
   const warnings: Problem[] = []
+  if (answer.balance.relative > 1e-6) {
+    warnings.push({
+      path: 'base',
+      message: `The balance closes only to ${figure(100 * answer.balance.relative)} %: the flows are next to nothing beside what the best ground here could carry.`,
+      place: { x: section.left.x, to: section.right.x },
+    })
+  }
   for (const { from, to } of answer.dry) {
     warnings.push({
       path: 'base',
