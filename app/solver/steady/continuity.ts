@@ -1,6 +1,6 @@
 // biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
 import { type Net, sinkFlow } from './net'
-import { type NetAnswer, STATE } from './newton'
+import { type NetAnswer, STATE } from './state'
 
 /**
  * Flows by continuity. Where ground conducts far better than what lies before it, its heads differ by less than a number can

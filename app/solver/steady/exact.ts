@@ -5,7 +5,8 @@ import { firstHeads, reachOf } from './guess'
 import { headInLink, type Inner, makeInner, REACH } from './inner'
 import { coarsest } from './mesh'
 import { buildNet } from './net'
-import { STATE, solveNet } from './newton'
+import { solveNet } from './newton'
+import { STATE } from './state'
 
 /**
  * The exact path (METHODS §2): over a level base, in bands uniform in K or in level layers, with recharge constant between

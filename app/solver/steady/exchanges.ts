@@ -4,9 +4,9 @@ import { transmissivity } from '../ground/columns'
 import type { Balance, Exchange } from '../types'
 import { type Inner, REACH } from './inner'
 import { SINK, sinkFlow } from './net'
-import { STATE } from './newton'
 import type { WetReach } from './reaches'
 import { labelOf } from './sense'
+import { STATE } from './state'
 
 /** Something asked for that does not come: the object, what is asked and what comes, m²/d, and where. */
 export type Short = { of: string; asked: number; comes: number; x: number }

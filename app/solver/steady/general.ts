@@ -6,7 +6,8 @@ import { firstHeads, reachOf } from './guess'
 import { endTransmissivity, headInLink, type Inner, makeInner, REACH } from './inner'
 import { cut, firstCells } from './mesh'
 import { buildNet, sinkFlow } from './net'
-import { STATE, solveNet } from './newton'
+import { solveNet } from './newton'
+import { STATE } from './state'
 
 export type General = {
   inner: Inner

@@ -3,7 +3,7 @@ import type { Section } from '~/section'
 import { headOfPotential, potential } from '../ground/columns'
 import { type Ground, shareOf } from '../ground/ground'
 import type { Net } from './net'
-import { type NetAnswer, STATE } from './newton'
+import { type NetAnswer, STATE } from './state'
 
 /** How the water stands in a link: an ordinary cell, a wall, on the ground surface (wet), or dry. */
 export const REACH = { plain: 0, wall: 1, wet: 2, dry: 3 } as const
@@ -24,7 +24,7 @@ export type Inner = {
   h: Float64Array
   before: Float64Array
   after: Float64Array
-  /** Node states (STATE in newton.ts) and what each node's own balance leaves over, m²/d. */
+  /** Node states (STATE in state.ts) and what each node's own balance leaves over, m²/d. */
   state: Uint8Array
   rest: Float64Array
   reach: Uint8Array

@@ -2,89 +2,10 @@
 import { headOfPotential, potential, transmissivity } from '../ground/columns'
 import { solveTridiagonal } from '../linear/tridiagonal'
 import { closeFlows } from './continuity'
+import { flux, linkFlux } from './flux'
 import { type Net, sinkFlow, sinkSlope } from './net'
 import { emptyStillPools } from './pools'
-
-/**
- * Flow through a link, m²/d, positive to the right, with its slopes in the two heads.
- *
- * With P(h) = ∫ T dh of the column at mid length, q = (P(h_left) − P(h_right)) / length. For one material this is the
- * mid-point scheme T(x_mid, mean head)·Δh/Δx, exact at the nodes over a level base; in level layers it is Girinskii's.
- * Where the water is thinner than half the drop of the base along the link, the column at mid length no longer knows how
- * much stands upslope: there the upslope node's own thickness s carries the flow, q = P(base_mid + drop)·2s/drop / length
- * (for one material K·s·drop/length: flow at normal depth, upstream weighted). Both pieces meet with equal value and, for
- * one material, equal slope; q never falls with the upslope head nor rises with the downslope head, so the strip has one
- * answer and a saturated thickness never goes below 0.
- */
-export const flux = { q: 0, left: 0, right: 0 }
-
-export function linkFlux(net: Net, j: number, hl: number, hr: number): void {
-  const { columns } = net
-  const drop = net.drop[j]!
-  const length = net.length[j]!
-  const top = columns.start[j + 1]! - 1
-  const zTop = columns.z[top]!
-  // The usual case first: both heads in the top layer, and enough water upslope.
-  if (hl > zTop && hr > zTop && Math.abs(drop) <= 2 * (drop > 0 ? hl - net.base[j]! : hr - net.base[j + 1]!)) {
-    const k = columns.k[top]! / length
-    const t = columns.t[top]! / length
-    const dl = hl - zTop
-    const dr = hr - zTop
-    flux.q = (t + (k * (dl + dr)) / 2) * (hl - hr)
-    flux.left = t + k * dl
-    flux.right = -(t + k * dr)
-    return
-  }
-  if (drop >= 0) {
-    side(net, j, hl, hl - net.base[j]!, drop, true)
-    const into = flux.q
-    const slope = flux.left
-    side(net, j, hr, 0, drop, false)
-    flux.q = (into - flux.q) / length
-    flux.right = -flux.left / length
-    flux.left = slope / length
-  } else {
-    side(net, j, hr, hr - net.base[j + 1]!, -drop, true)
-    const into = flux.q
-    const slope = flux.left
-    side(net, j, hl, 0, -drop, false)
-    flux.q = (flux.q - into) / length
-    flux.left = flux.left / length
-    flux.right = -slope / length
-  }
-}
-
-/** One side's share of the flow through a link (times its length) into flux.q, and its slope into flux.left. */
-function side(net: Net, j: number, h: number, s: number, drop: number, upslope: boolean): void {
-  if (upslope && s < drop / 2) {
-    const full = potential(net.columns, j, net.columns.z[net.columns.start[j]!]! + drop)
-    const rate = (2 * full) / drop
-    flux.q = s > 0 ? rate * s : 0
-    flux.left = rate
-    return
-  }
-  flux.q = potential(net.columns, j, h)
-  flux.left = transmissivity(net.columns, j, h)
-}
-
-/** How a node stands: free, held down at `upper`, or dry on the base with more asked of it than comes. */
-export const STATE = { free: 0, upper: 1, dry: 2, held: 3 } as const
-
-export type NetAnswer = {
-  h: Float64Array
-  /** Flow through each link at mid length, m²/d. */
-  q: Float64Array
-  state: Uint8Array
-  /**
-   * What a node's own balance leaves over, m²/d: at `upper` minus this is the seepage, at `dry` this is what is asked and does
-   * not come, at `held` minus this is what the water takes.
-   */
-  rest: Float64Array
-  converged: boolean
-  iterations: number
-  /** Pools that nothing holds, emptied: first and last node. */
-  pools: { first: number; last: number }[]
-}
+import { type NetAnswer, STATE } from './state'
 
 type Work = { n: number; lower: Float64Array; diagonal: Float64Array; upper: Float64Array; right: Float64Array }
 let work: Work | null = null

@@ -1,6 +1,6 @@
 // biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
 import { type Net, SINK } from './net'
-import { type NetAnswer, STATE } from './newton'
+import { type NetAnswer, STATE } from './state'
 
 /**
  * Water cut off behind dry ground with nothing that feeds, drains or holds it: any level would do (METHODS §2a.11). Such pools

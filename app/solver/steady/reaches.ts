@@ -2,7 +2,7 @@
 import type { Divide, DryReach } from '../types'
 import { endTransmissivity, type Inner, inLink, REACH } from './inner'
 import { sinkFlow } from './net'
-import { STATE } from './newton'
+import { STATE } from './state'
 
 /** A reach where the water table is held down at the ground; nodes first … last. `rate` m²/d out of the ground. */
 export type WetReach = { from: number; to: number; rate: number; first: number; last: number }
