@@ -41,6 +41,6 @@ export {
 } from './rules/rule'
 export { emptySection, isStartingDrawing, STARTING_DRAWINGS, type StartingDrawing, startingDrawing } from './start'
 export * from './types'
-export type { QuantityKind, UnitSet } from './units/kinds'
+export * from './units'
 export { findProblems } from './validate'
 export { problemsOfCase } from './validate/cases'
