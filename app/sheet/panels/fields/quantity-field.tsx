@@ -29,15 +29,17 @@ export function QuantityField(props: QuantityFieldProps) {
   const { kind, units, value } = props
   const id = useId()
   const field = useRef<HTMLInputElement>(null)
-  /** Just entered: nothing typed or pressed since. */
+  /** Just entered or kept: nothing typed or pressed since. */
   const entered = useRef(false)
   const [draft, setDraft] = useState<string | null>(null)
   const [wrong, setWrong] = useState<string | null>(null)
-  const editing = draft !== null
-  useLayoutEffect(() => {
-    if (editing && entered.current) field.current?.select()
-  }, [editing])
   const shown = typeof value === 'number' ? show(value, kind, units, !props.bare) : ''
+  const inField = draft ?? shown
+  useLayoutEffect(() => {
+    // Entered, or just kept: what is typed next takes the value's place. Only the text on the screen can be selected.
+    const element = field.current
+    if (entered.current && document.activeElement === element && element?.value === inField) element.select()
+  }, [inField])
   const release = () => {
     setDraft(null)
     setWrong(null)
@@ -79,7 +81,7 @@ export function QuantityField(props: QuantityFieldProps) {
         placeholder={value === 'several' ? 'several' : props.emptyMeans}
         aria-invalid={wrong !== null}
         aria-describedby={wrong ? `${id}-wrong` : undefined}
-        value={draft ?? shown}
+        value={inField}
         onFocus={() => {
           warmUnits()
           if (typeof value === 'number') setDraft(editable(value, kind, units))
@@ -102,6 +104,7 @@ export function QuantityField(props: QuantityFieldProps) {
         onKeyDown={(event) => {
           if (event.key === 'Enter' && draft !== null) {
             event.preventDefault()
+            entered.current = true
             void commit(draft)
           }
           if (event.key === 'Escape') {
