@@ -14,6 +14,8 @@ export const LIMITS = {
   bytes: { rate: 1 << 20, burst: 16 << 20 },
   /** Whole-state answers (sync step 1) a second: each may cost the encoding of the document. */
   states: { rate: 1, burst: 12 },
+  /** Whoever broke a document with a crafted update stays out this long. */
+  banned: 60_000,
   sockets: 4_000,
   socketsPerAddress: 200,
   socketsPerPerson: 60,

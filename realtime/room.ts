@@ -23,6 +23,7 @@ export type Member = Announcer & {
   /** Document messages received and not taken so far. */
   received: number
   refused: number
+  readonly closing: boolean
   /** We asked for everything it has and its answer (step 2) is still to come. */
   asked: boolean
   send(frame: Uint8Array): void
@@ -30,10 +31,13 @@ export type Member = Announcer & {
   close(code: CloseCode, why?: string): void
 }
 
+/** What its author is told after the commit; `bad` when this very message was refused, wholly or in part. */
+type Acknowledged = { n: number; refused: number; bad: boolean }
+
 /** In order: edits to store, and what must not leave before everything ahead of it is stored. */
 type Item =
-  | { is: 'edit'; update: Uint8Array; by: Member | null; n: number; refused: number }
-  | { is: 'nothing-new'; by: Member; n: number; refused: number }
+  | ({ is: 'edit'; update: Uint8Array; by: Member | null } & Acknowledged)
+  | ({ is: 'nothing-new'; by: Member } & Acknowledged)
   | { is: 'state'; frames: Uint8Array[]; to: Member }
 
 type Surroundings = {
@@ -47,8 +51,8 @@ type Surroundings = {
   behind(room: Room): void
   /** Enough rows to be worth a fold. */
   foldable(room: Room): void
-  /** The document in memory can no longer be trusted: everybody out, load anew. */
-  broken(room: Room, why: string): void
+  /** An update threw half way: the document in memory must be built anew from the log, see `mend`. */
+  broken(room: Room, by: Member | null, why: string): void
 }
 
 /** Above this many bytes or pieces the tail of a kept state is not worth more than encoding afresh. */
@@ -61,8 +65,10 @@ const TAIL = { bytes: 128 << 10, pieces: 300 }
 export class Room implements Source {
   readonly members = new Set<Member>()
   readonly presence: PresenceBook
-  private readonly doc: Y.Doc
-  private readonly measure: Measure
+  private doc: Y.Doc
+  private measure: Measure
+  /** While the document is built anew after a hostile update: what came meanwhile, to be done afterwards in order. */
+  private meanwhile: (() => void)[] | null = null
   /** Last seq up to which this document holds everything of the log. */
   known: number
   readonly epoch: number
@@ -104,14 +110,18 @@ export class Room implements Source {
     const [base, ...tail] = loaded.parts
     const bytes = tail.reduce((n, part) => n + part.length, 0)
     if (base && !this.damaged && tail.length <= TAIL.pieces && bytes <= TAIL.bytes) this.kept = { base, tail, bytes }
-    this.doc.on('update', (update) => this.captured.push(update))
+    this.doc.on('update', this.capture)
   }
+
+  private readonly capture = (update: Uint8Array) => void this.captured.push(update)
 
   get busy() {
     return this.waiting.length > 0 || this.underWay.length > 0
   }
 
   join(member: Member) {
+    if (this.meanwhile) return void this.meanwhile.push(() => this.join(member))
+    if (member.closing) return
     this.members.add(member)
     this.emptySince = null
     member.send(noticeFrame({ say: 'may', may: member.may, epoch: this.epoch }))
@@ -135,6 +145,7 @@ export class Room implements Source {
 
   /** Sync step 1: what the page is missing, once everything in it is stored. */
   answer(member: Member, stateVector: Uint8Array) {
+    if (this.meanwhile) return void this.meanwhile.push(() => this.answer(member, stateVector))
     const frames = this.stateFrames(stateVector)
     if (this.busy) this.push({ is: 'state', frames, to: member })
     else for (const frame of frames) member.send(frame)
@@ -151,13 +162,15 @@ export class Room implements Source {
 
   /** An update or sync step 2 of a member. Counted, checked, applied, queued for the commit. */
   edit(member: Member, update: Uint8Array, is: 'step2' | 'update') {
+    if (this.meanwhile) return void this.meanwhile.push(() => this.edit(member, update, is))
+    if (!this.members.has(member)) return
     member.received++
     if (is === 'step2') member.asked = false
     if (member.may !== 'write' || member.userId === null) {
       member.refused++
       // Every page answers our question with a step 2, readers too; only a true update is worth a word.
       if (is === 'update') member.send(noticeFrame({ say: 'refused', why: SAYS[CLOSE.noRight] }))
-      return this.dealtWith(member)
+      return this.dealtWith(member, true)
     }
     const verdict = this.measure.check(update)
     if (!verdict.ok) {
@@ -166,17 +179,18 @@ export class Room implements Source {
     }
     const fresh = this.apply(update, member)
     if (fresh === 'broken') return
-    if (dropPending(this.doc) && is === 'update') {
+    const bad = dropPending(this.doc) && is === 'update'
+    if (bad) {
       // It builds on edits that never came here (made offline, mostly). What could stand alone is in; a step 2 brings the rest.
       member.refused++
       if (!member.asked) this.ask(member)
     }
-    if (fresh.length === 0) return this.dealtWith(member)
-    for (const piece of fresh) {
-      this.measure.grown(piece.length, verdict.objects)
-      this.keep(piece)
-      this.push({ is: 'edit', update: piece, by: member, n: member.received, refused: member.refused })
-    }
+    const [first, ...more] = fresh
+    if (!first) return this.dealtWith(member, bad)
+    const piece = more.length ? Y.mergeUpdates(fresh) : first
+    this.measure.grown(piece.length, verdict.objects)
+    this.keep(piece)
+    this.push({ is: 'edit', update: piece, by: member, n: member.received, refused: member.refused, bad })
     if (this.heldBytes > this.around.limits.held)
       for (const other of [...this.members])
         if (other.may === 'write')
@@ -190,13 +204,33 @@ export class Room implements Source {
       Y.applyUpdate(this.doc, update, by ?? 'log')
       return this.captured
     } catch (error) {
-      const why = error instanceof Error ? error.message : String(error)
+      this.meanwhile ??= []
       by?.close(CLOSE.hostile)
-      this.around.broken(this, why)
+      this.around.broken(this, by, error instanceof Error ? error.message : String(error))
       return 'broken'
     } finally {
       this.captured = []
     }
+  }
+
+  /** The stored document, to go on with after a hostile update; edits on their way to the log are put on top again. */
+  mend(loaded: Loaded) {
+    if (this.closed) return loaded.doc.destroy()
+    this.doc.destroy()
+    this.doc = loaded.doc
+    for (const item of [...this.underWay, ...this.waiting]) if (item.is === 'edit') Y.applyUpdate(this.doc, item.update)
+    dropPending(this.doc)
+    this.doc.on('update', this.capture)
+    this.kept = null
+    this.measure = new Measure(this.doc, this.around.limits, Y.encodeStateAsUpdate(this.doc).length)
+    if (loaded.seq > this.known && !this.busy) {
+      // Rows of other sidecars came in with it; the members have not seen them yet.
+      this.known = loaded.seq
+      this.relay([{ update: Y.encodeStateAsUpdate(this.doc), by: null }])
+    }
+    const then = this.meanwhile ?? []
+    this.meanwhile = null
+    for (const go of then) go()
   }
 
   private keep(update: Uint8Array) {
@@ -206,8 +240,8 @@ export class Room implements Source {
     if (this.kept.tail.length > TAIL.pieces || this.kept.bytes > TAIL.bytes) this.kept = null
   }
 
-  private dealtWith(member: Member) {
-    if (this.busy) this.push({ is: 'nothing-new', by: member, n: member.received, refused: member.refused })
+  private dealtWith(member: Member, bad: boolean) {
+    if (this.busy) this.push({ is: 'nothing-new', by: member, n: member.received, refused: member.refused, bad })
     else member.send(acknowledgement(member.received, member.refused))
   }
 
@@ -254,7 +288,7 @@ export class Room implements Source {
       this.rowsSinceFold += edits.length
       this.changedSinceVersion = true
     }
-    const acknowledged = new Map<Member, { n: number; refused: number }>()
+    const acknowledged = new Map<Member, Acknowledged>()
     const acknowledge = (member: Member) => {
       const last = acknowledged.get(member)
       if (last) member.send(acknowledgement(last.n, last.refused))
@@ -262,9 +296,10 @@ export class Room implements Source {
     for (const item of items) {
       if (item.is === 'state') for (const frame of item.frames) item.to.send(frame)
       else if (item.by) {
-        // One acknowledgement for many messages, but never across a refusal: the page must know what came after it.
-        if (acknowledged.has(item.by) && acknowledged.get(item.by)?.refused !== item.refused) acknowledge(item.by)
-        acknowledged.set(item.by, { n: item.n, refused: item.refused })
+        // One acknowledgement for many messages, but never one for a refused message and what follows it: the page takes an
+        // acknowledgement with a new refusal to cover nothing.
+        if (item.bad || acknowledged.get(item.by)?.bad) acknowledge(item.by)
+        acknowledged.set(item.by, item)
       }
     }
     for (const member of acknowledged.keys()) acknowledge(member)
@@ -292,6 +327,7 @@ export class Room implements Source {
 
   /** Takes in rows that are already stored and relays what is new here. */
   takeIn(parts: Parts) {
+    if (this.meanwhile) return
     if (parts.epoch !== this.epoch) return this.shut(CLOSE.epoch)
     const fresh: Uint8Array[] = []
     for (const part of [...(parts.snapshot ? [parts.snapshot] : []), ...parts.rows.map((row) => row.update)]) {
@@ -349,6 +385,11 @@ export class Room implements Source {
     this.toldStalled = stalled
     const frame = noticeFrame({ say: stalled ? 'stalled' : 'storing' })
     for (const member of this.members) member.send(frame)
+  }
+
+  /** Its document is being built anew and must not be folded now. */
+  get mending() {
+    return this.meanwhile !== null
   }
 
   /** The state to fold, with the seq it surely holds everything of. */

@@ -23,6 +23,8 @@ type Options = {
   log: Log
   /** Other sidecars append to the same sections. */
   shared: boolean
+  /** Somebody sent what can only have been made to do harm. */
+  onHostile(holder: string): void
   onStored(sectionId: string, seq: number): void
   onPresence(sectionId: string, entries: PresenceEntry[]): void
   onOpen(sectionId: string): void
@@ -106,10 +108,10 @@ export class Rooms {
         onPresence: (room, entries) => this.options.onPresence(room.sectionId, entries),
         behind: (room) => void this.catchUp(room),
         foldable: (room) => this.fold(room),
-        broken: (room, why) => {
-          log.error({ sectionId, why }, 'the document in memory is broken; loading it anew')
-          this.drop(room)
-          room.shut(CLOSE.drain)
+        broken: (room, by, why) => {
+          log.error({ sectionId, why }, 'an update broke the document in memory; building it anew from the log')
+          if (by) this.options.onHostile(by.who.id)
+          void this.mend(room)
         },
       })
     } catch (error) {
@@ -118,6 +120,20 @@ export class Rooms {
       log.error({ sectionId, why: error instanceof Error ? error.message : String(error) }, 'a room cannot be loaded')
       if (error instanceof LogUnreadable) throw new Refusal(CLOSE.unreadable)
       throw new Refusal(CLOSE.drain, 'The database does not answer. The page tries again.')
+    }
+  }
+
+  /** Until the log can be read; the members stay and wait. */
+  private async mend(room: Room) {
+    while (!room.closed) {
+      try {
+        const found = await loadParts(this.options.db, room.sectionId)
+        if (!found || found.epoch !== room.epoch) return room.shut(found ? CLOSE.epoch : CLOSE.gone)
+        return room.mend(await assemble(this.options.db, room.sectionId, found))
+      } catch (error) {
+        if (error instanceof LogUnreadable) return room.shut(CLOSE.unreadable)
+        await new Promise((r) => setTimeout(r, 200))
+      }
     }
   }
 
@@ -182,7 +198,7 @@ export class Rooms {
 
   /** A version of one's own about every quarter of an hour of drawing. */
   private async version(room: Room) {
-    if (!room.changedSinceVersion) return
+    if (!room.changedSinceVersion || room.mending) return
     room.changedSinceVersion = false
     this.lastVersion.set(room.sectionId, Date.now())
     await automaticVersion(this.options.db, room.sectionId, undefined, room.snapshot())
@@ -233,7 +249,7 @@ export class Rooms {
   private farewell(room: Room): () => Promise<void> {
     const { sectionId, changedSinceVersion: changed } = room
     const fold = room.rowsSinceFold >= this.options.limits.foldRowsIdle
-    if (room.damaged || (!fold && !changed)) return async () => {}
+    if (room.damaged || room.mending || (!fold && !changed)) return async () => {}
     const snapshot = room.snapshot()
     return async () => {
       if (fold) await saveSnapshot(this.options.db, { sectionId, keepDays: KEEP_ROWS_DAYS, ...snapshot })

@@ -59,6 +59,7 @@ export function create(deps: Deps): Sidecar {
   const secret = new TextEncoder().encode(deps.liveSecret)
   const connections = new Map<string, Connection>()
   const perAddress = new Map<string, number>()
+  const banned = new Map<string, number>()
   let sockets = 0
   let draining = false
 
@@ -71,6 +72,7 @@ export function create(deps: Deps): Sidecar {
     limits,
     log,
     shared: Boolean(deps.redisUrl),
+    onHostile: (holder) => banned.set(holder, Date.now() + limits.banned),
     onStored: (sectionId, seq) => peers.stored(sectionId, seq),
     onPresence: (sectionId, entries) => peers.presence(sectionId, entries),
     onOpen: (sectionId) => peers.open(sectionId),
@@ -166,8 +168,8 @@ export function create(deps: Deps): Sidecar {
         throw new Refusal(CLOSE.tooMany, 'Too many connections are open. The page tries again.')
       if (!originFits(request, deps.appUrl)) throw new Refusal(CLOSE.noRight, 'This page may not connect here.')
       const connection = await admit(socket, request, () => gone)
-      if (!connection) return
       clearTimeout(deadline)
+      if (!connection) return
     } catch (error) {
       clearTimeout(deadline)
       if (gone) return
@@ -183,13 +185,17 @@ export function create(deps: Deps): Sidecar {
     const most = claims.who.kind === 'person' ? limits.socketsPerPerson : limits.socketsPerLink
     if ([...connections.values()].filter((c) => c.holder === holder).length >= most)
       throw new Refusal(CLOSE.tooMany, 'Too many sheets are open. Close some and try again.')
+    const until = banned.get(holder)
+    if (until !== undefined && until > Date.now()) throw new Refusal(CLOSE.hostile)
+    banned.delete(holder)
     const key = randomUUID()
     const answer = await ask(askFor(key, claims))
     const may = standing(claims, answer, claims.epoch)
     const words = new FirstWords(socket)
     const room = await rooms.enter(claims.section, claims.epoch, (parts) => words.answer(parts))
     if (room.epoch !== claims.epoch) throw new Refusal(CLOSE.epoch)
-    if (gone() || draining) return null
+    if (draining) throw new Refusal(CLOSE.drain)
+    if (gone()) return null
     const who = { id: holder, name: claims.name, ink: claims.ink, kind: claims.who.kind }
     const connection = new Connection(key, socket, claims, who, limits)
     connections.set(key, connection)

@@ -135,6 +135,32 @@ describe('frames nobody should send', () => {
     await live.sidecar.close()
   })
 
+  it('a crafted update that breaks a document half way: its sender is out for a while, the others stay and lose nothing', async () => {
+    // Found by spoiling true updates at random: it decodes to its end and throws while it is being applied.
+    const crafted = Buffer.from(
+      '010805002701016d026f3001280005260178017d002701016d026f3101280005020178017d012701016d026f3201280005040178017d022101016d026f330100010105010602',
+      'hex',
+    )
+    expect(() => Y.applyUpdate(new Y.Doc(), crafted)).toThrow()
+    const live = await startSidecar(connection)
+    const id = await practice.section()
+    const [a, b] = [await page(id, live.url), await page(id, live.url)]
+    map(a).set('true', 1)
+    const villain = await practice.person('engineer')
+    const socket = await intruder(id, live.url, villain)
+    map(b).set('also', 1)
+    socket.socket.send(updateFrame(crafted))
+    map(a).set('meanwhile', 1)
+    expect((await socket.closed).code).toBe(CLOSE.hostile)
+    await undisturbed(a, b)
+    const whole = { true: 1, also: 1, meanwhile: 1 }
+    expect([map(a).toJSON(), map(b).toJSON()]).toEqual([whole, whole])
+    expect((await loadDoc(db, id))?.doc.getMap('m').toJSON()).toEqual(whole)
+    const again = await intruder(id, live.url, villain)
+    expect((await again.closed).code).toBe(CLOSE.hostile)
+    await live.sidecar.close()
+  })
+
   it('a frame over 1 MiB is refused with a word, and not taken into memory', async () => {
     const live = await startSidecar(connection)
     const id = await practice.section()
