@@ -38,6 +38,28 @@ describe('the ledger', () => {
     expect(screen.getByText('Through Sheet wall')).toBeInTheDocument()
     expect(screen.getByText('20 to the left')).toBeInTheDocument()
   })
+  it('adds up what seeps out, and puts recharge first', () => {
+    const wet = {
+      ...SOLVED,
+      seepage: [
+        { from: 40, to: 50, rate: 0.02 },
+        { from: 70, to: 75, rate: 0.03 },
+      ],
+      exchanges: [
+        { of: 'seepage.0', label: 'Seepage at the ground', rate: 0.02 },
+        { of: 'seepage.1', label: 'Seepage at the ground', rate: 0.03 },
+        ...SOLVED.exchanges.toReversed(),
+      ],
+    }
+    expect(entriesOf(wet).map(({ label }) => label)).toEqual([
+      'Pasture',
+      'To Mill canal',
+      'To Fallow Beck',
+      'Seeps out at the ground',
+    ])
+    show(<Ledger />, fakeSheet({ solution: wet }))
+    expect(rowOf(/Seeps out/).getByText('−50')).toBeInTheDocument()
+  })
   it('leads from a line to what it is about', async () => {
     const sheet = fakeSheet()
     show(<Ledger />, sheet)

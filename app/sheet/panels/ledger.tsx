@@ -23,19 +23,28 @@ const inkOf = (of: string): Entry['ink'] =>
         ? 'works'
         : 'water'
 
-/** The ledger's lines: what comes in counts plus, what goes out minus. Walls pass water on and stand apart. */
+const ORDER: Entry['ink'][] = ['recharge', 'water', 'works', 'seepage']
+
+/**
+ * The ledger's lines: what comes in counts plus, what goes out minus. Walls pass water on and stand apart; what seeps out at the
+ * ground is one line, its reaches stand in the answer.
+ */
 export function entriesOf(solution: Solved): Entry[] {
-  return solution.exchanges
-    .filter(({ across }) => across === undefined)
-    .map(({ of, label, rate, state }) => {
-      const into = of.startsWith('recharge') ? rate : -rate
-      return { of, label: worded(of, label, into), rate: into, ink: inkOf(of), state }
-    })
+  const entries: Entry[] = []
+  for (const { of, label, rate, across, state } of solution.exchanges) {
+    if (across !== undefined) continue
+    const into = of.startsWith('recharge') ? rate : -rate
+    const ink = inkOf(of)
+    const seeps = ink === 'seepage' ? entries.find((entry) => entry.ink === 'seepage') : undefined
+    if (seeps) seeps.rate += into
+    else entries.push({ of, label: worded(ink, label, into), rate: into, ink, state })
+  }
+  return entries.sort((a, b) => ORDER.indexOf(a.ink) - ORDER.indexOf(b.ink))
 }
 
-function worded(of: string, label: string, into: number): string {
-  if (of.startsWith('recharge')) return label
-  if (of.startsWith('seepage')) return `${label}`
+function worded(ink: Entry['ink'], label: string, into: number): string {
+  if (ink === 'recharge') return label
+  if (ink === 'seepage') return 'Seeps out at the ground'
   return into > 0 ? `From ${label}` : `To ${label}`
 }
 
@@ -86,7 +95,11 @@ export function Ledger() {
           {entries.map((entry) => (
             <tr key={entry.of}>
               <th scope="row">
-                <button type="button" className="plain-link" onClick={() => goTo(sheet, { path: entry.of })}>
+                <button
+                  type="button"
+                  className="plain-link"
+                  onClick={() => goTo(sheet, { path: entry.of, place: placeOf(solution, entry) })}
+                >
                   {entry.label}
                 </button>
                 {entry.state ? <small> {entry.state}</small> : null}
@@ -125,4 +138,10 @@ function named(entry: Entry, [left, right]: (string | undefined)[]): string {
   if (entry.of !== 'left' && entry.of !== 'right') return entry.label
   const name = (entry.of === 'left' ? left : right) ?? `${entry.of} bank`
   return entry.rate > 0 ? `From ${name}` : `To ${name}`
+}
+
+/** Seepage is no object to pick: its first reach is shown instead. */
+const placeOf = (solution: Solved, { ink }: Entry) => {
+  const reach = ink === 'seepage' ? solution.seepage[0] : undefined
+  return reach ? { x: reach.from, to: reach.to } : undefined
 }
