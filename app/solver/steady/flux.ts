@@ -56,8 +56,11 @@ function side(net: Net, j: number, h: number, s: number, drop: number, upslope: 
   if (upslope && s < drop / 2) {
     const full = potential(net.columns, j, net.columns.z[net.columns.start[j]!]! + drop)
     const rate = (2 * full) / drop
-    flux.q = s > 0 ? rate * s : 0
-    flux.left = rate
+    // Rain on the upper half of the link passes the middle too; it would only be missed where the water is thin.
+    const w = net.w[j]!
+    const rain = w > 0 ? Math.min((w * net.length[j]! * net.length[j]!) / 2, full) : 0
+    flux.q = s > 0 ? rate * s + rain * (1 - (2 * s) / drop) : rain
+    flux.left = rate - (2 * rain) / drop
     return
   }
   flux.q = potential(net.columns, j, h)

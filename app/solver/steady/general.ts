@@ -7,6 +7,7 @@ import { endTransmissivity, headInLink, type Inner, makeInner, REACH } from './i
 import { cut, firstCells } from './mesh'
 import { buildNet, sinkFlow } from './net'
 import { solveNet } from './newton'
+import { endOf } from './reaches'
 import { STATE } from './state'
 
 export type General = {
@@ -46,10 +47,17 @@ export function linkError(inner: Inner, j: number, goal: number): number {
   const sl = hl - net.base[j]!
   const sr = hr - net.base[j + 1]!
   if (Math.max(sl, sr) < goal) return 0
-  if (drop !== 0 && Math.min(drop > 0 ? sl : sr, drop > 0 ? sr : sl) < Math.abs(drop) / 2) {
-    return -Math.min(Math.abs(sl - sr) / 2, Math.abs(hl - hr))
-  }
   const own = net.columns
+  const upslope = drop > 0 ? sl : sr
+  const fall = Math.abs(drop)
+  if (fall > 0 && Math.min(upslope, drop > 0 ? sr : sl) < fall / 2) {
+    const first = own.start[j]!
+    // Layers thinner than the fall of the base are averaged there: look closer.
+    if (own.start[j + 1]! - first > 1 && own.z[first + 1]! < own.z[first]! + fall)
+      return -Math.min(Math.max(sl, sr), fall)
+    const known = net.w[j]! >= 0 ? Math.min(0.5, (2 * upslope) / fall) : 0.5
+    return -Math.min(Math.abs(sl - sr) * known, Math.abs(hl - hr))
+  }
   if (drop === 0 && own.start[j + 1]! - own.start[j]! === 1) return 0
   const mid = transmissivity(own, j, (hl + hr) / 2)
   if (mid <= 0) return Math.abs(hl - hr)
@@ -87,12 +95,12 @@ function partsFor(inner: Inner, errors: Float64Array, total: number, goal: numbe
   let cells = 0
   for (let j = 0; j < net.links; j++) if (net.panel[j]! >= 0) cells++
   const parts = new Int32Array(cells)
-  const each = goal / (6 * cells)
+  const each = goal / (2 * cells)
   const whole = net.x[net.nodes - 1]! - net.x[0]!
   const size = new Float64Array(net.links)
   for (let j = 0; j < net.links; j++) {
     const e = errors[j]!
-    const m = e < 0 ? (-2 * e) / goal : total > goal / 3 ? Math.sqrt(e / each) : 1
+    const m = e < 0 ? (-2 * e) / goal : total > goal ? Math.sqrt(e / each) : 1
     size[j] = net.length[j]! / Math.min(8, Math.max(1, Math.ceil(m)))
     if (net.panel[j]! < 0) continue
     if (doubt(inner, j) > goal / 4 && net.length[j]! > whole * 1e-7) size[j] = net.length[j]! / 8
@@ -123,7 +131,11 @@ function edgeOfReach(inner: Inner, j: number): boolean {
   const a = inner.state[j]!
   const b = inner.state[j + 1]!
   if (a === b) return false
-  return a === STATE.upper || b === STATE.upper || a === STATE.dry || b === STATE.dry
+  if (a === STATE.dry || b === STATE.dry) return true
+  // A spring at a low point has no width: the reach ends at the node, and there is nothing to look closer at.
+  if (a === STATE.upper && b === STATE.free) return endOf(inner, j, 1) !== inner.net.x[j]
+  if (b === STATE.upper && a === STATE.free) return endOf(inner, j + 1, -1) !== inner.net.x[j + 1]
+  return a === STATE.upper || b === STATE.upper
 }
 
 /**
@@ -137,10 +149,8 @@ function doubt(inner: Inner, j: number): number {
   if (reach[j] === REACH.wet) {
     let lacks = Math.max(0, before[j + 1]! - after[j]! - net.w[j]! * length)
     for (const i of [j, j + 1]) {
-      const whole = i > 0 && i < net.nodes - 1 && state[i] === STATE.upper
-      const both = reach[j + (i === j ? -1 : 1)]
-      if (whole && (both === REACH.wet || both === REACH.wall))
-        lacks = Math.max(lacks, after[i]! + sinkFlow(net, i, h[i]!) - before[i]!)
+      const inside = i > 0 && i < net.nodes - 1 && state[i] === STATE.upper
+      if (inside) lacks = Math.max(lacks, after[i]! + sinkFlow(net, i, h[i]!) - before[i]!)
     }
     if (lacks <= 0) return 0
     return (lacks * length) / Math.max(1e-300, transmissivity(net.columns, j, (h[j]! + h[j + 1]!) / 2))

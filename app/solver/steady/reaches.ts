@@ -53,7 +53,7 @@ export function wetReaches(inner: Inner): WetReach[] {
 }
 
 /** Where the wet reach that has its last wet node at `node` truly ends, going `way`. */
-function endOf(inner: Inner, node: number, way: -1 | 1): number {
+export function endOf(inner: Inner, node: number, way: -1 | 1): number {
   const { net, ground, before, after, state } = inner
   const x = net.x[node]!
   const j = way < 0 ? node - 1 : node
