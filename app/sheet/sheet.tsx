@@ -13,7 +13,9 @@ export type { First } from './shell/surround'
  * One open section: the drawing with everything around it. Drawn on the server from the stored section; in the browser the live
  * store and the canvas take over without the page changing under the reader.
  */
-export function SheetPage({ first }: { first: First }) {
+export function SheetPage(props: { first: First }) {
+  // The sheet is opened on what the page came with; whatever the router loads later does not open it again.
+  const [first] = useState(props.first)
   const [still] = useState(() => createStillSheet(first))
   const [live, setLive] = useState<LiveSheet | null>(null)
   useEffect(() => {

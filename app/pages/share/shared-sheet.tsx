@@ -1,4 +1,3 @@
-import { useState } from 'react'
 import { type First, SheetPage } from '~/sheet/sheet'
 
 /**
@@ -6,6 +5,5 @@ import { type First, SheetPage } from '~/sheet/sheet'
  * What the holder may do is decided by the server; this page only offers no more.
  */
 export function SharedSheet({ first }: { first: First & { token: string } }) {
-  const [reading] = useState<First>(() => ({ ...first, may: 'read', userId: null }))
-  return <SheetPage first={reading} />
+  return <SheetPage first={{ ...first, may: 'read', userId: null }} />
 }
