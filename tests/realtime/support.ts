@@ -58,7 +58,17 @@ export async function ownMariadb(settings: string[] = []) {
       every: true,
       settings,
     })
-  let running = await start()
+  let ended = false
+  const begin = async () => {
+    ended = false
+    const started = await start()
+    // Not the database's own end but its keeper's: a keeper that is still tidying up would meet the next start.
+    started.onEnd(() => {
+      ended = true
+    })
+    return started
+  }
+  let running = await begin()
   await migrate(running.url)
   return {
     url: running.url,
@@ -68,15 +78,8 @@ export async function ownMariadb(settings: string[] = []) {
     pause: () => process.kill(running.pid, 'SIGSTOP'),
     resume: () => process.kill(running.pid, 'SIGCONT'),
     async start() {
-      await until('the killed database is gone', () => {
-        try {
-          process.kill(running.pid, 0)
-          return false
-        } catch {
-          return true
-        }
-      })
-      running = await start()
+      await until('the killed database is gone', () => ended)
+      running = await begin()
     },
     async remove() {
       await running.stop()
