@@ -1,4 +1,8 @@
+export { editsBetween } from './between'
+export { gestureEdits } from './gesture'
 export { LOCAL, SEED } from './origins'
+export { PRESENCE, readPresence } from './presence'
 export { applyEdits, liveOf, readLive } from './read'
 export * from './types'
+export { docVersion, upgradeDoc } from './upgrade'
 export { createLive, writeEdits, writeSection } from './write'

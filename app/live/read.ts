@@ -40,7 +40,7 @@ export function applyEdits(live: LiveSection, edits: readonly Edit[]): LiveSecti
 }
 
 /** A section that was not read from a document (built by hand, or copied on its way to a worker) is mirrored from what it shows. */
-function mirrorFor(live: LiveSection): Mirror {
+export function mirrorFor(live: LiveSection): Mirror {
   const known = mirrors.get(live)
   if (known) return known
   const tree = treeOfMirror(EMPTY)

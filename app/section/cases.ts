@@ -1,5 +1,7 @@
-import { caseRuleAt, OFF_LISTS } from './rules/paths'
+import { describePath, kindAt } from './describe'
+import { casePathsOf, caseRuleAt, OFF_LISTS, valueAt } from './rules/paths'
 import type { Case, CaseValue, Section } from './types'
+import type { QuantityKind } from './units/kinds'
 
 type Fields = Record<string, unknown>
 
@@ -41,4 +43,21 @@ const asFields = (value: unknown): Fields => (typeof value === 'object' && value
 /** Ids that a case of this section may leave out. */
 export function offIds(section: Section): Set<string> {
   return new Set(OFF_LISTS.flatMap((list) => section[list].map(({ id }) => id)))
+}
+
+/** A value that a case may set: its path, its name for people, what kind of number it is (null: text, flag), its drawn value. */
+export type CasePath = { path: string; label: string; kind: QuantityKind | null; value: CaseValue | undefined }
+
+/** Every value of this section that a case may set, in the order of the document. A value not given is undefined. */
+export function casePaths(section: Section): CasePath[] {
+  return casePathsOf(section).map((path) => ({
+    path,
+    label: describePath(section, path),
+    kind: kindAt(section, path),
+    value: caseValue(valueAt(section, path)),
+  }))
+}
+function caseValue(value: unknown): CaseValue | undefined {
+  const plain = value === null || typeof value === 'number' || typeof value === 'string' || typeof value === 'boolean'
+  return plain ? value : undefined
 }

@@ -1,4 +1,5 @@
-export { applyCase, inCase, offIds } from './cases'
+export { applyCase, type CasePath, casePaths, inCase, offIds } from './cases'
+export { describePath, kindAt } from './describe'
 export { aboveAt, breaksOf, lineAt } from './geometry/line'
 export { areaOf, boxOf, clipToStrip, contains, crossingOf, verticalAt } from './geometry/polygon'
 export { FORMAT, VERSION } from './migrate'
