@@ -1,6 +1,6 @@
 // biome-ignore-all lint/style/noNonNullAssertion: the loops keep every index inside its array.
 import type { Section } from '~/section'
-import { transmissivity } from '../ground/columns'
+import { potential, transmissivity } from '../ground/columns'
 import type { Ground } from '../ground/ground'
 import { firstHeads, reachOf } from './guess'
 import { endTransmissivity, headInLink, type Inner, makeInner, REACH } from './inner'
@@ -36,9 +36,9 @@ function goalOf(h: Float64Array): number {
  * How far the head over link j is off because T changes along x within it, m. The cell's own scheme takes the column at mid
  * length; where T at the ends, at the same heads, differs from it by the factor r, the missing head is ∫ q (1 − 1/r) dx / T.
  * 0 for one material over a level base, where the scheme is exact. In thin water the whole change of thickness counts, with a
- * minus sign: such errors fade along the slope, so they do not add up.
+ * minus sign: such errors fade along the slope, so they do not add up. Flows up to `least` m²/d count as none.
  */
-export function linkError(inner: Inner, j: number, goal: number): number {
+export function linkError(inner: Inner, j: number, goal: number, least: number): number {
   const { net, ground, h } = inner
   if (net.panel[j]! < 0 || inner.reach[j] === REACH.dry) return 0
   const hl = h[j]!
@@ -51,12 +51,12 @@ export function linkError(inner: Inner, j: number, goal: number): number {
   const upslope = drop > 0 ? sl : sr
   const fall = Math.abs(drop)
   if (fall > 0 && Math.min(upslope, drop > 0 ? sr : sl) < fall / 2) {
-    const first = own.start[j]!
-    // Layers thinner than the fall of the base are averaged there: look closer.
-    if (own.start[j + 1]! - first > 1 && own.z[first + 1]! < own.z[first]! + fall)
-      return -Math.min(Math.max(sl, sr), fall)
+    // Water that climbs here spills over the crest above: its film stands too high, and the pool behind it too low.
+    const climbs = drop > 0 ? inner.before[j + 1]! < -least : inner.after[j]! > least
+    if (climbs) return -Math.abs(hl - hr)
+    const layered = own.start[j + 1]! - own.start[j]! > 1 ? thinLayers(inner, j, Math.max(sl, sr)) : 0
     const known = net.w[j]! >= 0 ? Math.min(0.5, (2 * upslope) / fall) : 0.5
-    return -Math.min(Math.abs(sl - sr) * known, Math.abs(hl - hr))
+    return -Math.max(layered, Math.min(Math.abs(sl - sr) * known, Math.abs(hl - hr)))
   }
   if (drop === 0 && own.start[j + 1]! - own.start[j]! === 1) return 0
   const mid = transmissivity(own, j, (hl + hr) / 2)
@@ -69,6 +69,23 @@ export function linkError(inner: Inner, j: number, goal: number): number {
   const lost = part(0, hl, inner.after[j]!) + part(1, hr, inner.before[j + 1]!)
   // Opposite ends nearly cancel when T runs straight; what is left of the curvature is the error, their difference a warning.
   return Math.abs((lost * net.length[j]!) / (6 * mid))
+}
+
+/**
+ * In thin water over layers: how far the thickness s is off because the link takes the mean K over its whole fall, and the
+ * column at mid length for both ends, m.
+ */
+function thinLayers({ net, ground }: Inner, j: number, s: number): number {
+  const { columns } = net
+  const floor = columns.z[columns.start[j]!]!
+  const fall = Math.abs(net.drop[j]!)
+  const mid = transmissivity(columns, j, floor + s)
+  if (!(mid > 0)) return 0
+  const taken = (2 * potential(columns, j, floor + fall) * Math.min(s, fall / 2)) / (fall * fall)
+  const own = transmissivity(columns, j, floor + Math.min(s, fall / 2))
+  const ends = [0, 1].map((end) => endTransmissivity(ground, net, j, end === 0 ? 0 : 1, net.base[j + end]! + s) / mid)
+  const off = Math.max(Math.abs(taken / own - 1), ...ends.map((ratio) => Math.abs(ratio - 1)))
+  return s * Math.min(1, off)
 }
 
 /** A quarter, a sixteenth … of the cells asked for, so that quartering comes out at them. */
@@ -200,8 +217,10 @@ export function solveGeneral(section: Section, ground: Ground, options: { nodes?
   for (let level = 0; level < 8; level++) {
     const errors = new Float64Array(net.links)
     let total = 0
+    let least = 0
+    for (const flow of inner.after) least = Math.max(least, 1e-9 * Math.abs(flow))
     for (let j = 0; j < net.links; j++) {
-      errors[j] = linkError(inner, j, goal)
+      errors[j] = linkError(inner, j, goal, least)
       total += Math.max(0, errors[j]!)
     }
     const parts = partsFor(inner, errors, total, goal)
