@@ -1,6 +1,6 @@
 import type { RawData, WebSocket } from 'ws'
 import { bytesOf } from './connection'
-import { readFrame, stepTwo, updateFrame } from './protocol'
+import { readFrame, wholeState } from './protocol'
 
 /** Frames kept while the room is being loaded; the rest waits in the kernel. */
 const MOST = 4
@@ -26,8 +26,14 @@ export class FirstWords {
     const at = this.kept.findIndex(({ data, isBinary }) => isBinary && asksForAll(bytesOf(data)))
     const [base, ...tail] = parts
     if (at < 0 || !base || tail.length > 200) return
+    let frames: Uint8Array[]
+    try {
+      frames = wholeState(base, tail)
+    } catch {
+      // A row that cannot be read: the room finds out which and answers.
+      return
+    }
     this.kept.splice(at, 1)
-    const frames = [stepTwo(base), ...tail.map(updateFrame)]
     await Promise.all(
       frames.map((frame) => new Promise<void>((resolve) => this.socket.send(frame, { binary: true }, () => resolve()))),
     )

@@ -1,5 +1,6 @@
 import * as decoding from 'lib0/decoding'
 import * as encoding from 'lib0/encoding'
+import * as Y from 'yjs'
 import { MESSAGE, type Notice, SYNC } from '~/live/codes'
 
 const written = (write: (encoder: encoding.Encoder) => void): Uint8Array => encoding.encode(write)
@@ -22,6 +23,15 @@ export const updateFrame = (update: Uint8Array) =>
     encoding.writeVarUint(e, SYNC.update)
     encoding.writeVarUint8Array(e, update)
   })
+/**
+ * The whole state as frames; the last one is the step 2, because a page calls itself synced on it. A small state goes as one
+ * update; of a large one the tail goes first (the page keeps it until the base is there), as merging would cost more than sending.
+ */
+export function wholeState(base: Uint8Array, tail: Uint8Array[]): Uint8Array[] {
+  if (tail.length === 0) return [stepTwo(base)]
+  if (base.length < 128 << 10) return [stepTwo(Y.mergeUpdates([base, ...tail]))]
+  return [updateFrame(Y.mergeUpdates(tail)), stepTwo(base)]
+}
 export const acknowledgement = (dealtWith: number, refused: number) =>
   written((e) => {
     encoding.writeVarUint(e, MESSAGE.acknowledge)

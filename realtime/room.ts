@@ -12,6 +12,7 @@ import {
   stepOne,
   stepTwo,
   updateFrame,
+  wholeState,
 } from './protocol'
 import { Measure } from './validate'
 import type { Source } from './writer'
@@ -155,9 +156,7 @@ export class Room implements Source {
     const fromNothing = stateVector.length === 0 || (stateVector.length === 1 && stateVector[0] === 0)
     if (!fromNothing) return [stepTwo(Y.encodeStateAsUpdate(this.doc, stateVector))]
     if (!this.kept) this.kept = { base: Y.encodeStateAsUpdate(this.doc), tail: [], bytes: 0 }
-    const { base, tail } = this.kept
-    if (tail.length === 0) return [stepTwo(base)]
-    return [stepTwo(base), updateFrame(tail.length === 1 ? (tail[0] as Uint8Array) : Y.mergeUpdates(tail))]
+    return wholeState(this.kept.base, this.kept.tail)
   }
 
   /** An update or sync step 2 of a member. Counted, checked, applied, queued for the commit. */
@@ -231,6 +230,7 @@ export class Room implements Source {
     const then = this.meanwhile ?? []
     this.meanwhile = null
     for (const go of then) go()
+    if (this.waiting.length) this.around.wake(this)
   }
 
   private keep(update: Uint8Array) {
@@ -257,10 +257,17 @@ export class Room implements Source {
   // ——— the writer's side ———
 
   hasMore() {
-    return this.waiting.length > 0
+    return this.waiting.length > 0 && !this.meanwhile
+  }
+
+  /** A batch is on its way to the log. */
+  get storing() {
+    return this.underWay.length > 0
   }
 
   take(bytes: number): NewUpdate[] {
+    // While the document is built anew from the log, the log must hold still for this room.
+    if (this.meanwhile) return []
     let count = 0
     for (let left = bytes; count < this.waiting.length && left > 0; count++) {
       const item = this.waiting[count] as Item

@@ -127,6 +127,8 @@ export class Rooms {
   private async mend(room: Room) {
     while (!room.closed) {
       try {
+        // What is on its way must be in what is read.
+        while (room.storing) await new Promise((r) => setTimeout(r, 5))
         const found = await loadParts(this.options.db, room.sectionId)
         if (!found || found.epoch !== room.epoch) return room.shut(found ? CLOSE.epoch : CLOSE.gone)
         return room.mend(await assemble(this.options.db, room.sectionId, found))

@@ -231,7 +231,14 @@ describe('too much of a good thing', () => {
   })
 
   it('a reader that never reads is hung up on; the others are not slowed', async () => {
-    const live = await startSidecar(connection, { backlog: 2 << 20, ping: 200, silence: 1_500 })
+    const live = await startSidecar(connection, {
+      backlog: 2 << 20,
+      ping: 200,
+      silence: 1_500,
+      // The one who draws so much is not the offender here.
+      bytes: { rate: 1 << 28, burst: 1 << 28 },
+      edits: { rate: 1_000, burst: 1_000 },
+    })
     const id = await practice.section()
     const [a, b] = [await page(id, live.url), await page(id, live.url)]
     const socket = await intruder(id, live.url)

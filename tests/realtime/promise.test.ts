@@ -1,6 +1,7 @@
 import { eq } from 'drizzle-orm'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { loadDoc } from '../../drizzle/log'
+import * as Y from 'yjs'
+import { compact, loadDoc } from '../../drizzle/log'
 import { section } from '../../drizzle/schema'
 import { testConnection } from '../setup/clean'
 import { joined, makePractice, map, openPage, type Page, type Practice, startSidecar, until } from './support'
@@ -114,6 +115,33 @@ describe('what others see is stored', () => {
     )
     await other.sidecar.close()
   })
+
+  for (const size of [10, 400_000])
+    it(`a page that says it is there has everything, ${size < 100 ? 'small' : 'large'}, cold and warm`, async () => {
+      const sectionId = await practice.section()
+      const a = open(db, { person: practice.principal }, sectionId, live.url)
+      await joined(a)
+      map(a).set('body', 'x'.repeat(size))
+      await until('stored', () => a.state.kind === 'stored')
+      await compact(db, sectionId)
+      for (let i = 0; i < 5; i++) map(a).set(`k${i}`, i)
+      map(a).delete('k0')
+      await until('stored', () => a.state.kind === 'stored')
+      const cold = await startSidecar(connection)
+      for (const url of [cold.url, cold.url, live.url]) {
+        const doc = new Y.Doc()
+        let had: unknown = null
+        open(db, { person: practice.principal }, sectionId, url, {
+          doc,
+          onReady: () => {
+            had = doc.getMap('m').toJSON()
+          },
+        })
+        await until('it is there', () => had !== null)
+        expect(had).toEqual(map(a).toJSON())
+      }
+      await cold.sidecar.close()
+    })
 
   it('takes a message too big for one frame in parts', async () => {
     const sectionId = await practice.section()
