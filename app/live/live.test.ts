@@ -2,6 +2,8 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import * as Y from 'yjs'
 import { parseSection, STARTING_DRAWINGS, startingDrawing } from '~/section'
+import { solveSteady } from '~/solver'
+import { drawable } from '~/solver/testing/arbitrary'
 import { applyEdits, createLive, type Edit, LOCAL, liveOf, readLive, writeEdits, writeSection } from './index'
 import { anyDrawing, editFrom, seed } from './testing'
 
@@ -38,6 +40,19 @@ describe('a first state', () => {
     Y.applyUpdate(a, Y.encodeStateAsUpdate(b))
     expect(readLive(a).section).toEqual(section)
   })
+
+  it('of any section the solver is tried on is read back as it was written', () => {
+    fc.assert(
+      fc.property(drawable, (drawn) => {
+        const parsed = parseSection(JSON.parse(JSON.stringify(drawn)))
+        if (!parsed.ok) throw new Error(JSON.stringify(parsed.errors))
+        const live = readLive(createLive(parsed.section))
+        expect(live.section).toEqual(parsed.section)
+        expect(live.problems).toEqual([])
+      }),
+      { numRuns: 150 },
+    )
+  }, 30_000)
 
   it('of nothing reads as an empty strip that says so', () => {
     const live = sound(new Y.Doc())
@@ -112,6 +127,20 @@ describe('edits', () => {
         },
       ),
       { numRuns: 150 },
+    )
+  }, 60_000)
+
+  it('never make a section, or a case of it, that the solver trips over', () => {
+    fc.assert(
+      fc.property(anyDrawing, fc.array(seed, { maxLength: 12 }), (section, seeds) => {
+        const { section: drawn } = seeds.reduce((live, one) => applyEdits(live, [editFrom(one, live)]), liveOf(section))
+        for (const caseId of [null, ...drawn.cases.map(({ id }) => id)]) {
+          const solution = solveSteady(drawn, { caseId })
+          if (solution.status === 'solved') expect(solution.profile.head.every(Number.isFinite)).toBe(true)
+          else expect(solution.reason.length).toBeGreaterThan(0)
+        }
+      }),
+      { numRuns: 60 },
     )
   }, 60_000)
 

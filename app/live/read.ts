@@ -17,8 +17,9 @@ const latest = new WeakMap<Y.Doc, LiveSection>()
  * changed since the last reading of this document keep their identity; when nothing has, the same object comes back.
  */
 export function readLive(doc: Y.Doc): LiveSection {
-  const mirror = mirrorOf(doc)
-  const live = share(latest.get(doc), settle(mirror))
+  const before = latest.get(doc)
+  const mirror = mirrorOf(doc, before && mirrors.get(before))
+  const live = share(before, settle(mirror))
   latest.set(doc, live)
   mirrors.set(live, mirror)
   return live

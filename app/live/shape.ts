@@ -71,20 +71,33 @@ function rootOf(doc: Y.Doc, root: Root): Y.Map<unknown> | null {
   }
 }
 
-function mirrorMap(map: Y.Map<unknown>, depth: number): Map<string, unknown> {
+type Mirrored = ReadonlyMap<string, unknown>
+
+function mirrorMap(map: Y.Map<unknown>, depth: number, before: Mirrored | undefined): Mirrored {
+  let same = before !== undefined && before.size === map.size
+  if (same)
+    map.forEach((value, key) => {
+      same &&= before?.has(key) === true && Object.is(mirrorValue(value, depth, before.get(key)), before.get(key))
+    })
+  if (same && before) return before
   const out = new Map<string, unknown>()
   map.forEach((value, key) => {
-    if (value instanceof Y.Map) out.set(key, depth > 0 ? mirrorMap(value, depth - 1) : OPAQUE)
-    else out.set(key, value instanceof Y.AbstractType || value instanceof Y.Doc ? OPAQUE : value)
+    out.set(key, mirrorValue(value, depth, before?.get(key)))
   })
   return out
 }
+function mirrorValue(value: unknown, depth: number, before: unknown): unknown {
+  if (value instanceof Y.Map)
+    return depth > 0 ? mirrorMap(value, depth - 1, before instanceof Map ? before : undefined) : OPAQUE
+  return value instanceof Y.AbstractType || value instanceof Y.Doc ? OPAQUE : value
+}
 
-export function mirrorOf(doc: Y.Doc): Mirror {
-  const mirror = new Map<Root, ReadonlyMap<string, unknown>>()
+/** The document's mirror; branches that equal those of an earlier mirror are those, so that what was made of them still holds. */
+export function mirrorOf(doc: Y.Doc, before?: Mirror): Mirror {
+  const mirror = new Map<Root, Mirrored>()
   for (const root of ROOTS) {
     const map = rootOf(doc, root)
-    mirror.set(root, map ? mirrorMap(map, 3) : new Map())
+    mirror.set(root, map ? mirrorMap(map, 3, before?.get(root)) : new Map())
   }
   return mirror
 }

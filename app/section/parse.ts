@@ -1,9 +1,9 @@
 import type { z } from 'zod'
 import { migrate } from './migrate'
 import { LISTS } from './rules/fields'
-import { LIMITS } from './rules/limits'
+import { LIMITS, SLACK } from './rules/limits'
 import { SCHEMA } from './schema'
-import type { ParseResult, Problem, Section } from './types'
+import type { ParseResult, Point, Problem, Section } from './types'
 import { findProblems } from './validate'
 
 type Step = string | number
@@ -14,7 +14,7 @@ const isJson = (value: unknown): value is Json => typeof value === 'object' && v
  * Reads a section document (format "doab.section", version 1) from parsed JSON. Strict: an unknown field is an error with its
  * path. Left out, these mean: a list: empty; title "Untitled section"; datum "m above site datum"; host: the only material;
  * conductance, bed: null; clearance 0; a case's off and set: empty; surfaceSeepage: true. A last vertex that repeats an outline's
- * first is dropped. SI: metres and days. Never throws, whatever comes in; every error has the path in the format's words (ids for
+ * first is dropped; line ends within a nanometre of their bank are put at it. SI: metres and days. Never throws, whatever comes in; every error has the path in the format's words (ids for
  * objects in lists), a sentence that says how to mend it, and a place on the drawing where there is one.
  */
 export function parseSection(input: unknown): ParseResult {
@@ -53,8 +53,17 @@ function parse(input: unknown): ParseResult {
       ],
     }
   const section: Section = { ...rest, host: chosen }
+  for (const line of [section.ground, section.base]) {
+    atBank(line[0], section.left.x)
+    atBank(line.at(-1), section.right.x)
+  }
   const errors = findProblems(section)
   return errors.length > 0 ? { ok: false, errors } : { ok: true, section }
+}
+
+/** An end that misses its bank by the rounding of a sum stands at it. */
+function atBank(end: Point | undefined, x: number): void {
+  if (end && Math.abs(end[0] - x) <= SLACK) end[0] = x
 }
 
 /** zod keeps a key whose value is undefined; the section has the key or has it not. */

@@ -95,3 +95,21 @@ export function placeOfHeld(held: Held): Place {
   const z = number('level') ?? number('head')
   return z === undefined ? { x } : { x, z }
 }
+
+type Remembered = { key: string; value: unknown; said: Problem[] }
+const memory = new WeakMap<Held, Remembered>()
+
+/**
+ * What was made of this branch before, for the same key; else made now. Branches are never changed once made, so the reading of one
+ * that an edit did not touch need not be worked out again. Problems said while making it are said again.
+ */
+export function remembered<T>(held: Held, key: string, say: Say, make: (say: Say) => T): T {
+  let known = memory.get(held)
+  if (known?.key !== key) {
+    const quiet = problemList()
+    known = { key, value: make(quiet.say), said: quiet.problems }
+    if (held !== NONE) memory.set(held, known)
+  }
+  for (const { path, message, place } of known.said) say(path, message, place)
+  return known.value as T
+}

@@ -2,7 +2,7 @@ import { aboveAt, areaOf, crossingOf, LIMITS, lineAt, POINT, type Point, said, t
 import { inOrder } from '../order'
 import { isKey, MADE_UP } from '../shape'
 import type { VertexKey } from '../types'
-import type { Held, Say } from './context'
+import { type Held, remembered, type Say } from './context'
 
 export type Vertex = { key: VertexKey; x: number; z: number }
 export type Strip = { left: number; right: number }
@@ -40,6 +40,10 @@ function verticesOf(held: Held, path: string, say: Say): (Vertex & { order: stri
 
 /** Ground or base from bank to bank: in order of x, one vertex at each, the first and last at the banks. */
 export function readLine(held: Held, name: 'ground' | 'base', strip: Strip, say: Say): Vertex[] {
+  return remembered(held, `${name} ${strip.left} ${strip.right}`, say, (told) => makeLine(held, name, strip, told))
+}
+
+function makeLine(held: Held, name: 'ground' | 'base', strip: Strip, say: Say): Vertex[] {
   const all = verticesOf(held, name, say).sort((a, b) => a.x - b.x || inOrder(a, b))
   const line: Vertex[] = []
   for (const { key, x, z } of all) {
@@ -122,19 +126,35 @@ function endAt(
   return { key: MADE_UP[side], x, z: height }
 }
 
-const points = (line: readonly Vertex[]): Point[] => line.map(({ x, z }) => [x, z])
+const pointsMade = new WeakMap<readonly Vertex[], Point[]>()
+const keysOfPoints = new WeakMap<readonly Point[], VertexKey[]>()
+
+/** The positions of vertices; the same vertices give the same list. */
+export function pointsOf(line: readonly Vertex[]): Point[] {
+  const known = pointsMade.get(line)
+  if (known) return known
+  const made = line.map(({ x, z }): Point => [x, z])
+  pointsMade.set(line, made)
+  keysOfPoints.set(
+    made,
+    line.map(({ key }) => key),
+  )
+  return made
+}
+/** The keys that go with a list of positions made by `pointsOf`. */
+export const keysOf = (points: readonly Point[]): VertexKey[] => keysOfPoints.get(points) ?? []
 
 /** Brings the base below the ground wherever it pierces it. Both stay as they are when it does not. */
 export function keepCover(ground: Vertex[], base: Vertex[], say: Say): { ground: Vertex[]; base: Vertex[] } {
-  const above = aboveAt(points(base), points(ground))
+  const above = aboveAt(pointsOf(base), pointsOf(ground))
   if (!above) return { ground, base }
   say(
     'base',
     `The base rises above the ground near x = ${said(above.at)} m; it is taken to lie just below. Lower it or raise the ground.`,
-    { x: above.at, z: lineAt(points(ground), above.at), ...(above.to > above.at ? { to: above.to } : {}) },
+    { x: above.at, z: lineAt(pointsOf(ground), above.at), ...(above.to > above.at ? { to: above.to } : {}) },
   )
   const lowered = base.map((vertex) => ({ ...vertex }))
-  const surface = points(ground)
+  const surface = pointsOf(ground)
   for (const vertex of lowered) vertex.z = Math.min(vertex.z, lineAt(surface, vertex.x) - COVER)
   // A hollow of the ground between two vertices of the base: both ends of that stretch go down.
   let i = 0
@@ -157,7 +177,7 @@ export function keepCover(ground: Vertex[], base: Vertex[], say: Say): { ground:
     }
   }
   const floor = -LIMITS.coordinate
-  if (aboveAt(points(lowered), surface) === null && lowered.every(({ z }) => z >= floor))
+  if (aboveAt(pointsOf(lowered), surface) === null && lowered.every(({ z }) => z >= floor))
     return { ground, base: lowered }
   // Only for what nobody draws: ground at the very limit of heights.
   const raised = ground.map((vertex) => ({ ...vertex, z: Math.max(vertex.z, floor + 1) }))
@@ -167,6 +187,10 @@ export function keepCover(ground: Vertex[], base: Vertex[], say: Say): { ground:
 
 /** An outline in its order; crossed ones are untangled; null when it encloses nothing. */
 export function readOutline(held: Held, path: string, say: Say): Vertex[] | null {
+  return remembered(held, path, say, (told) => makeOutline(held, path, told))
+}
+
+function makeOutline(held: Held, path: string, say: Say): Vertex[] | null {
   const found = verticesOf(held, path, say).sort(inOrder)
   const outline: Vertex[] = found.slice(0, LIMITS.outline).map(({ key, x, z }) => ({ key, x, z }))
   const first = outline[0]
@@ -177,9 +201,9 @@ export function readOutline(held: Held, path: string, say: Say): Vertex[] | null
     say(path, 'This body has fewer than three vertices left, so it is left out. Draw it anew or remove it.', place)
     return null
   }
-  const crossing = crossingOf(points(outline))
+  const crossing = crossingOf(pointsOf(outline))
   const turned = crossing ? roundMiddle(outline) : outline
-  if ((crossing && crossingOf(points(turned))) || Math.abs(areaOf(points(turned))) < LIMITS.area) {
+  if ((crossing && crossingOf(pointsOf(turned))) || Math.abs(areaOf(pointsOf(turned))) < LIMITS.area) {
     say(path, 'This outline encloses no area, so the body is left out. Move its vertices apart, or undo.', place)
     return null
   }

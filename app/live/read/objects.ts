@@ -15,8 +15,8 @@ import {
   objectFields,
   type RechargeZone,
 } from '~/section'
-import { type Held, isHeld, listOf, NONE, placeOfHeld, readFields, type Say } from './context'
-import { readOutline, type Vertex } from './lines'
+import { type Held, isHeld, listOf, NONE, placeOfHeld, readFields, remembered, type Say } from './context'
+import { pointsOf, readOutline } from './lines'
 
 /** Values read by the rules of an object's fields: each is there and of the right kind, which TypeScript cannot see. */
 function object<T>(values: Record<string, unknown>): T {
@@ -42,31 +42,33 @@ export function readBank(held: Held, side: 'left' | 'right', x: number, say: Say
   return object<Bank>({ kind, x, ...values, ...names })
 }
 
-function objectsOf<T>(
-  held: Held,
-  list: ListWord,
-  say: Say,
-  more: (fields: Held, values: Record<string, unknown>, path: string) => Record<string, unknown> | null,
-): T[] {
-  return listOf(held, list, LIMITS.list, say).flatMap(([id, fields]): T[] => {
-    if (!isId(id)) {
-      say(list, `One of ${list} has an id that cannot be read and is left out.`, placeOfHeld(fields))
-      return []
-    }
-    const path = `${list}.${id}`
-    const kind = fields.get('kind')
-    if (list === 'features' && !isFeatureKind(kind)) {
-      say(path, 'What kind of feature this is could not be read, so it is left out.', placeOfHeld(fields))
-      return []
-    }
-    const { values, missing } = readFields(fields, objectFields(list, kind), path, say, placeOfHeld(fields))
-    if (missing !== null && list !== 'materials') {
-      say(path, `Without its ${missing} this means nothing and is left out. Remove it or undo.`, placeOfHeld(fields))
-      return []
-    }
-    const whole = more(fields, values, path)
-    return whole ? [object<T>({ id, ...whole, ...named(fields, path, say) })] : []
-  })
+type More = (fields: Held, values: Record<string, unknown>, path: string, say: Say) => Record<string, unknown> | null
+
+/** `hangsOn`: whatever else the reading of an object depends on. */
+function objectsOf<T>(held: Held, list: ListWord, say: Say, more: More, hangsOn = ''): T[] {
+  return listOf(held, list, LIMITS.list, say).flatMap(([id, fields]): T[] =>
+    remembered(fields, `${list}.${id} ${hangsOn}`, say, (told) => objectOf<T>(id, fields, list, told, more)),
+  )
+}
+
+function objectOf<T>(id: string, fields: Held, list: ListWord, say: Say, more: More): T[] {
+  if (!isId(id)) {
+    say(list, `One of ${list} has an id that cannot be read and is left out.`, placeOfHeld(fields))
+    return []
+  }
+  const path = `${list}.${id}`
+  const kind = fields.get('kind')
+  if (list === 'features' && !isFeatureKind(kind)) {
+    say(path, 'What kind of feature this is could not be read, so it is left out.', placeOfHeld(fields))
+    return []
+  }
+  const { values, missing } = readFields(fields, objectFields(list, kind), path, say, placeOfHeld(fields))
+  if (missing !== null && list !== 'materials') {
+    say(path, `Without its ${missing} this means nothing and is left out. Remove it or undo.`, placeOfHeld(fields))
+    return []
+  }
+  const whole = more(fields, values, path, say)
+  return whole ? [object<T>({ id, ...whole, ...named(fields, path, say) })] : []
 }
 
 const as = (_: Held, values: Record<string, unknown>) => values
@@ -78,16 +80,13 @@ export function readMaterials(held: Held, say: Say): Material[] {
   return [{ id: 'sand', name: 'Sand', k: 1 }]
 }
 
-export function readBodies(held: Held, host: string, say: Say): { bodies: Body[]; keys: Record<string, string[]> } {
-  const keys: [string, string[]][] = []
-  const bodies = objectsOf<Body>(held, 'bodies', say, (fields, values, path) => {
+export function readBodies(held: Held, host: string, say: Say): Body[] {
+  const more: More = (fields, values, path, told) => {
     const inner = fields.get('outline')
-    const outline: Vertex[] | null = readOutline(isHeld(inner) ? inner : NONE, `${path}.outline`, say)
-    if (!outline) return null
-    keys.push([path.slice('bodies.'.length), outline.map(({ key }) => key)])
-    return { material: values.material ?? host, outline: outline.map(({ x, z }) => [x, z]) }
-  })
-  return { bodies, keys: Object.fromEntries(keys) }
+    const outline = readOutline(isHeld(inner) ? inner : NONE, `${path}.outline`, told)
+    return outline && { material: values.material ?? host, outline: pointsOf(outline) }
+  }
+  return objectsOf<Body>(held, 'bodies', say, more, host)
 }
 
 export const readRecharge = (held: Held, say: Say) => objectsOf<RechargeZone>(held, 'recharge', say, as)
@@ -95,4 +94,3 @@ export const readFeatures = (held: Held, say: Say) =>
   objectsOf<Feature>(held, 'features', say, (fields, values) => ({ kind: fields.get('kind'), ...values }))
 export const readObservations = (held: Held, say: Say) => objectsOf<Observation>(held, 'observations', say, as)
 export const readLimits = (held: Held, say: Say) => objectsOf<Limit>(held, 'limits', say, as)
-export { named }

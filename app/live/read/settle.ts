@@ -14,7 +14,7 @@ import { DOC_VERSION, MADE_UP, type Mirror, type Root } from '../shape'
 import type { LiveSection } from '../types'
 import { readCases } from './cases'
 import { type Held, NONE, problemList, readField, readFields, type Say } from './context'
-import { keepCover, readLine, type Strip, type Vertex } from './lines'
+import { keepCover, keysOf, pointsOf, readLine, type Strip } from './lines'
 import { readMarkup } from './markup'
 import { mend } from './mend'
 import {
@@ -56,20 +56,19 @@ export function settle(mirror: Mirror): LiveSection {
   const words = readWords(root('section'), say)
   const materials = readMaterials(root('materials'), say)
   const host = words.host ?? materials[0]?.id ?? ''
-  const { bodies, keys } = readBodies(root('bodies'), host, say)
-  const ground = points(lines.ground)
+  const ground = pointsOf(lines.ground)
   const drawn: Section = {
     format: 'doab.section',
     version: 1,
     title: words.title,
     datum: words.datum,
     ground,
-    base: points(lines.base),
+    base: pointsOf(lines.base),
     left: withStage(readBank(root('left'), 'left', strip.left, say), ground),
     right: withStage(readBank(root('right'), 'right', strip.right, say), ground),
     materials,
     host,
-    bodies,
+    bodies: readBodies(root('bodies'), host, say),
     recharge: readRecharge(root('recharge'), say),
     features: readFeatures(root('features'), say),
     observations: readObservations(root('observations'), say),
@@ -82,20 +81,18 @@ export function settle(mirror: Mirror): LiveSection {
   const section = { ...mend(withinVertices(drawn, say), say) }
   section.cases = readCases(root('cases'), section, say)
   section.sources = readSources(root('sources'), section)
-  const shown = new Set(section.bodies.map(({ id }) => id))
   return {
     section,
     keys: {
-      ground: lines.ground.map(({ key }) => key),
-      base: lines.base.map(({ key }) => key),
-      bodies: Object.fromEntries(Object.entries(keys).filter(([id]) => shown.has(id))),
+      ground: keysOf(section.ground),
+      base: keysOf(section.base),
+      bodies: Object.fromEntries(section.bodies.map(({ id, outline }) => [id, keysOf(outline)])),
     },
     markup,
     problems,
   }
 }
 
-const points = (line: Vertex[]): Section['ground'] => line.map(({ x, z }) => [x, z])
 const blankKeys = () => ({
   ground: [MADE_UP.left, MADE_UP.right],
   base: [MADE_UP.left, MADE_UP.right],

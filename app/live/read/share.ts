@@ -3,7 +3,7 @@ const isJson = (value: unknown): value is Json => typeof value === 'object' && v
 
 /**
  * `fresh`, with every part that equals its counterpart in `old` replaced by that counterpart: what has not changed keeps its
- * identity, so that whatever is drawn or solved from it need not be made again. May change `fresh`, which must be nobody else's.
+ * identity, so that whatever is drawn or solved from it need not be made again. Neither is changed.
  */
 export function share<T>(old: unknown, fresh: T): T {
   return shared(old, fresh) as T
@@ -11,24 +11,36 @@ export function share<T>(old: unknown, fresh: T): T {
 
 function shared(old: unknown, fresh: unknown): unknown {
   if (Object.is(old, fresh)) return fresh
-  if (Array.isArray(old) && Array.isArray(fresh)) {
-    let equal = old.length === fresh.length
-    for (let i = 0; i < fresh.length; i++) {
-      fresh[i] = shared(old[i], fresh[i])
-      if (!Object.is(fresh[i], old[i])) equal = false
+  if (Array.isArray(old) && Array.isArray(fresh)) return sharedList(old, fresh)
+  return isJson(old) && isJson(fresh) ? sharedObject(old, fresh) : fresh
+}
+
+function sharedList(old: unknown[], fresh: unknown[]): unknown[] {
+  let equal = old.length === fresh.length
+  let copy: unknown[] | null = null
+  for (let i = 0; i < fresh.length; i++) {
+    const part = shared(old[i], fresh[i])
+    if (!Object.is(part, old[i]) || i >= old.length) equal = false
+    if (!Object.is(part, fresh[i])) {
+      copy ??= fresh.slice()
+      copy[i] = part
     }
-    return equal ? old : fresh
   }
-  if (isJson(old) && isJson(fresh)) {
-    const keys = Object.keys(fresh)
-    let equal = keys.length === Object.keys(old).length
-    for (const key of keys) {
-      const before = Object.hasOwn(old, key) ? old[key] : undefined
-      const value = shared(before, fresh[key])
-      if (!Object.is(value, fresh[key])) fresh[key] = value
-      if (!Object.hasOwn(old, key) || !Object.is(value, before)) equal = false
+  return equal ? old : (copy ?? fresh)
+}
+
+function sharedObject(old: Json, fresh: Json): Json {
+  const keys = Object.keys(fresh)
+  let equal = keys.length === Object.keys(old).length
+  let copy: Json | null = null
+  for (const key of keys) {
+    const known = Object.hasOwn(old, key)
+    const part = shared(known ? old[key] : undefined, fresh[key])
+    if (!known || !Object.is(part, old[key])) equal = false
+    if (!Object.is(part, fresh[key])) {
+      copy ??= { ...fresh }
+      copy[key] = part
     }
-    return equal ? old : fresh
   }
-  return fresh
+  return equal ? old : (copy ?? fresh)
 }

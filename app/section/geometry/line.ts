@@ -34,8 +34,13 @@ export function aboveAt(
 ): { from: number; to: number; at: number; by: number } | null {
   let before: { x: number; gap: number } | null = null
   let found: { from: number; to: number; at: number; by: number } | null = null
-  for (const x of breaksOf(under, over)) {
-    const gap = lineAt(over, x) - lineAt(under, x)
+  // Both lines are walked along together: i and j are the next vertices of each.
+  let [i, j] = [0, 0]
+  while (i < under.length || j < over.length) {
+    const x = Math.min(under[i]?.[0] ?? Infinity, over[j]?.[0] ?? Infinity)
+    const gap = heightIn(over, j, x) - heightIn(under, i, x)
+    while (i < under.length && (under[i]?.[0] ?? x) <= x) i++
+    while (j < over.length && (over[j]?.[0] ?? x) <= x) j++
     const pierces = gap < -slack
     // Two neighbours that touch: the lines run together between them.
     const touches = gap <= slack && before !== null && before.gap <= slack
@@ -49,4 +54,11 @@ export function aboveAt(
     before = { x, gap }
   }
   return found
+}
+
+/** Height at x on the edge that ends at vertex i; level beyond the ends. */
+function heightIn(line: readonly Point[], i: number, x: number): number {
+  const [b, a] = [line[i], line[i - 1]]
+  if (!b) return a?.[1] ?? Number.NaN
+  return !a || x >= b[0] || b[0] <= a[0] ? b[1] : a[1] + ((b[1] - a[1]) * (x - a[0])) / (b[0] - a[0])
 }
