@@ -151,9 +151,9 @@ function yardstick(): Server {
 const group = async (server: Server, room: string, size: number) => {
   const clients: Client[] = []
   for (let i = 0; i < size; i++) clients.push(await server.join(room))
-  const late = sleep(15_000).then(() => Promise.reject(new Error('a client does not sync')))
-  await Promise.race([Promise.all(clients.map((c) => c.synced)), late])
+  const late = sleep(8_000).then(() => Promise.reject(new Error('a client does not sync')))
   late.catch(() => {})
+  await Promise.race([Promise.all(clients.map((c) => c.synced)), late])
   return clients
 }
 
@@ -280,22 +280,28 @@ async function joining(server: Server) {
   return { warm: percentile(warm, 0.5), restarted, killed, rss }
 }
 
-/** Edits another client has seen, then SIGKILL at once: how many are gone? */
+async function survives(server: Server, i: number): Promise<boolean> {
+  const [room] = (await server.rooms(1)) as [string]
+  const clients = await group(server, room, 2)
+  const [a, b] = clients as [Client, Client]
+  a.doc.getMap('m').set('last', i)
+  await until('it is seen', () => b.doc.getMap('m').get('last') === i)
+  process.kill(server.pid(), 'SIGKILL')
+  for (const client of clients) client.close()
+  await server.stop('SIGKILL')
+  await server.start()
+  const [fresh] = (await group(server, room, 1)) as [Client]
+  const kept = fresh.doc.getMap('m').get('last') === i
+  fresh.close()
+  return kept
+}
+
+/** Edits another client has seen, then SIGKILL at once: how many are gone? A server that does not come back counts as lost. */
 async function durability(server: Server, rounds: number) {
   let lost = 0
   for (let i = 0; i < rounds; i++) {
-    const [room] = (await server.rooms(1)) as [string]
-    const clients = await group(server, room, 2)
-    const [a, b] = clients as [Client, Client]
-    a.doc.getMap('m').set('last', i)
-    await until('it is seen', () => b.doc.getMap('m').get('last') === i)
-    process.kill(server.pid(), 'SIGKILL')
-    for (const client of clients) client.close()
-    await server.stop('SIGKILL')
-    await server.start()
-    const [fresh] = await group(server, room, 1).catch(() => [])
-    if (fresh?.doc.getMap('m').get('last') !== i) lost++
-    fresh?.close()
+    const kept = await survives(server, i).catch(() => false)
+    if (!kept) lost++
   }
   return { lost, rounds }
 }
