@@ -1,3 +1,8 @@
+export { footing } from './footing'
+export { K_RANGES, type KRange, usualRange } from './footing/ranges'
+export { type ArrowField, type ArrowOptions, arrows } from './inside/arrows'
+export { type FlowLineOptions, flowLines } from './inside/lines'
+export { ageAt, travelTime } from './inside/time'
 export { readAt } from './steady/read'
 export { type SolveOptions, solveSteady } from './steady/solve'
 export * from './types'

@@ -45,7 +45,7 @@ export function staysBetween({ solution, row, section }: Ground): FootingLine[] 
     bound: 0,
     source: SOURCES.common,
     verdict: dry > 0 ? 'doubtful' : 'holds',
-    place: solution.dry[0],
+    place: spot(solution.dry[0]),
     says:
       dry > 0
         ? 'Here the base stands dry or carries only a film; heads there are the base itself.'
@@ -73,7 +73,7 @@ export function staysBetween({ solution, row, section }: Ground): FootingLine[] 
     bound: 0,
     source: SOURCES.common,
     verdict: flooded ? 'fails' : springs ? 'doubtful' : 'holds',
-    place: flooded && at !== undefined ? { x: at } : solution.seepage[0],
+    place: flooded && at !== undefined ? { x: at } : spot(solution.seepage[0]),
     says: flooded
       ? 'The computed water table stands above the ground. Let the ground seep, or lower the load.'
       : springs
@@ -193,6 +193,8 @@ export function steepSheets({ section }: Ground): FootingLine | null {
     says: 'A thin slanted tight body holds water back more than this method shows. A two-dimensional check is called for.',
   }
 }
+
+const spot = (reach: { from: number; to: number } | undefined) => reach && { x: reach.from, to: reach.to }
 
 function heightAt(line: [number, number][], x: number): number {
   const i = Math.max(

@@ -1,6 +1,5 @@
 import type { Section } from '~/section'
 import type { FootingLine } from '../types'
-import { SOURCES } from './types'
 
 /** Paths of the numbers the answer hangs on, in the format's words. */
 export function inputPaths(section: Section): string[] {

@@ -19,12 +19,13 @@ function stops(solution: Solved): Stop[] {
   return list.sort((a, b) => a.x - b.x)
 }
 
-/** Points where the integrand has a kink: profile nodes in between, thinned to what matters. */
+/** Where the integrand has a kink: breaks of the drawing, ends of wet and dry reaches, places where the flow turns. */
 function breaksBetween(solution: Solved, from: number, to: number): number[] {
   const low = Math.min(from, to)
   const high = Math.max(from, to)
-  const xs = [...solution.profile.x].filter((x, i, all) => x > low && x < high && x !== all[i - 1])
-  const list = [low, ...xs, high]
+  const turns = [...solution.divides, ...solution.seepage, ...solution.dry].flatMap((reach) => [reach.from, reach.to])
+  const xs = [...new Set([...solution.inner.ground.x, ...turns])].filter((x) => x > low && x < high)
+  const list = [low, ...xs.sort((a, b) => a - b), high]
   return from <= to ? list : list.reverse()
 }
 
@@ -98,7 +99,7 @@ function timeAlong(solution: Solved, from: number, to: number, sign: 1 | -1): nu
       },
       Math.min(a, b),
       Math.max(a, b),
-      1e-8,
+      1e-7,
       24,
     )
     if (missing) return null
@@ -154,7 +155,7 @@ export function ageAt(solution: Solution, x: number, z: number): number | null {
       },
       Math.min(near, far),
       Math.max(near, far),
-      1e-8,
+      1e-7,
       24,
     )
     if (missing) return null
