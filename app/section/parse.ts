@@ -22,12 +22,15 @@ export function parseSection(input: unknown): ParseResult {
     return parse(input)
   } catch {
     // A getter or a proxy that throws, or something nested without end.
-    return { ok: false, errors: [{ path: '', message: 'This is not plain JSON and cannot be read as a section.' }] }
+    return {
+      ok: false,
+      errors: [{ path: 'section', message: 'This is not plain JSON and cannot be read as a section.' }],
+    }
   }
 }
 
 function parse(input: unknown): ParseResult {
-  if (!isJson(input)) return { ok: false, errors: [{ path: '', message: 'A section must be a JSON object.' }] }
+  if (!isJson(input)) return { ok: false, errors: [{ path: 'section', message: 'A section must be a JSON object.' }] }
   const current = migrate(input)
   if (!current.ok) return current
   const hidden = findHidden(current.input)

@@ -13,7 +13,7 @@ import {
 import { DOC_VERSION, MADE_UP, type Mirror, type Root } from '../shape'
 import type { LiveSection } from '../types'
 import { readCases } from './cases'
-import { type Held, NONE, problemList, readField, readFields, type Say } from './context'
+import { type Held, NONE, problemList, readField, type Say } from './context'
 import { keepCover, keysOf, pointsOf, readLine, type Strip } from './lines'
 import { readMarkup } from './markup'
 import { mend } from './mend'
@@ -38,12 +38,12 @@ export function settle(mirror: Mirror): LiveSection {
   const version = root('doc').get('version')
   if (version !== undefined && version !== DOC_VERSION)
     say(
-      '',
+      'section',
       'This section was drawn with another version of Doab; what this one cannot read is not shown. Reload the page.',
     )
   const markup = readMarkup(root('layers'), root('marks'), say)
   if (isBlank(mirror)) {
-    say('', 'Nothing has been drawn here yet: an empty strip is shown.')
+    say('section', 'Nothing has been drawn here yet: an empty strip is shown.')
     return { section: emptySection(), keys: blankKeys(), markup, problems }
   }
 
@@ -112,7 +112,11 @@ function readWords(held: Held, say: Say) {
   }
   const host = held.get('host')
   const seepage = held.get('surfaceSeepage')
-  const names: Pick<Section, 'name' | 'note'> = readFields(held, NAMED, 'section', say).values
+  const names: Pick<Section, 'name' | 'note'> = {}
+  for (const field of ['name', 'note'] as const) {
+    const value = held.has(field) ? readField(held, field, NAMED[field], field, say) : undefined
+    if (typeof value === 'string') names[field] = value
+  }
   return {
     title: text('title', 'Untitled section'),
     datum: text('datum', 'm above site datum'),

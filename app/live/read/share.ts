@@ -31,7 +31,9 @@ function sharedList(old: unknown[], fresh: unknown[]): unknown[] {
 
 function sharedObject(old: Json, fresh: Json): Json {
   const keys = Object.keys(fresh)
-  let equal = keys.length === Object.keys(old).length
+  // Keys in another order are another object: what is read must be the same to the letter on every replica.
+  const before = Object.keys(old)
+  let equal = keys.length === before.length && keys.every((key, i) => key === before[i])
   let copy: Json | null = null
   for (const key of keys) {
     const known = Object.hasOwn(old, key)
