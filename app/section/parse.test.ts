@@ -148,7 +148,7 @@ describe('an error', () => {
       'a conductivity of nothing',
       (s) => setOn(first(s, 'materials'), { k: 0 }),
       'materials.dune.k',
-      /at least 1e-9 m\/d/,
+      /at least 1e-12 m\/d/,
     ],
     [
       'a text for a number',

@@ -58,7 +58,7 @@ export const BANK = {
 } satisfies Record<Bank['kind'], Record<string, NumberRule>>
 
 export const MATERIAL = {
-  k: { type: 'number', label: 'The conductivity', kind: 'conductivity', unit: 'm/d', min: 1e-9, max: 1e5 },
+  k: { type: 'number', label: 'The conductivity', kind: 'conductivity', unit: 'm/d', min: 1e-12, max: 1e5 },
   anisotropy: {
     type: 'number',
     label: 'The ratio of horizontal to vertical conductivity',
