@@ -52,6 +52,10 @@ export async function appendUpdates(
 ): Promise<Appended[]> {
   if (updates.length === 0) return []
   const ids = [...new Set(updates.map((u) => u.sectionId))].sort()
+  if (!options.before) {
+    const last = await appendInOneTrip(db, updates)
+    if (last) return ids.map((id) => ({ sectionId: id, before: null, last: last.get(id) ?? 0 }))
+  }
   return db.transaction(async (tx) => {
     // Locked in one order everywhere, so two sidecars cannot wait for each other.
     const locked = await tx
@@ -82,6 +86,48 @@ export async function appendUpdates(
       last: last.get(id) ?? 0,
     }))
   })
+}
+
+/**
+ * The same transaction as one statement of MariaDB's, so that a commit costs one trip instead of four: on a busy machine each
+ * trip waits for two processes to be scheduled, and every edit waits for the commit before it is shown.
+ * @returns the last seq of each section, or null when a section is gone or stale and nothing was stored.
+ */
+async function appendInOneTrip(db: Executor, updates: NewUpdate[]): Promise<Map<string, number> | null> {
+  const sections = [...new Map(updates.map((u) => [`${u.sectionId} ${u.epoch}`, u])).values()]
+  const wanted = sql.join(
+    sections.map((u) => sql`(id = ${u.sectionId} and epoch = ${u.epoch})`),
+    sql` or `,
+  )
+  const rows = sql.join(
+    updates.map((u) => sql`(${u.sectionId}, ${u.epoch}, ${sql.param(u.update, sectionUpdate.update)}, ${u.userId})`),
+    sql`, `,
+  )
+  const [sets] = await db.execute(sql`begin not atomic
+    declare found int default 0;
+    declare exit handler for sqlexception begin rollback; resignal; end;
+    start transaction;
+    select count(*) into found from (select id from section where ${wanted} order by id for update) locked;
+    if found = ${sections.length} then
+      insert into section_update (section_id, epoch, \`update\`, user_id) values ${rows};
+      select last_insert_id() as first;
+      commit;
+    else
+      rollback;
+    end if;
+  end`)
+  const first = firstOf(sets)
+  if (first === null) return null
+  return new Map(updates.map((update, i) => [update.sectionId, first + i]))
+}
+
+/** The one number in the result sets of `appendInOneTrip`. */
+function firstOf(sets: unknown): number | null {
+  for (const set of Array.isArray(sets) ? sets : []) {
+    const row: unknown = Array.isArray(set) ? set[0] : set
+    if (typeof row === 'object' && row !== null && 'first' in row) return Number(row.first)
+  }
+  return null
 }
 
 /** Epoch and last stored seq of each section that exists. */

@@ -67,6 +67,39 @@ describe('the update log', () => {
     await expect(append).rejects.toMatchObject({ stale: [two], gone: ['nowhere'] })
     await expect(append).rejects.toBeInstanceOf(NotAppended)
     expect(await contents(one)).toEqual({})
+    // The sidecar's way in one trip keeps to the same.
+    const inOne = appendUpdates(
+      db,
+      [
+        { sectionId: one, epoch: 1, update, userId: null },
+        { sectionId: two, epoch: 1, update, userId: null },
+      ],
+      { before: false },
+    )
+    await expect(inOne).rejects.toMatchObject({ stale: [two], gone: [] })
+    expect(await contents(one)).toEqual({})
+  })
+
+  it('stores in one trip exactly as in four, bytes and order alike', async () => {
+    const [one, two] = [await practice.section(), await practice.section()]
+    const { userId } = practice.principal
+    const write = pen()
+    const odd = write('odd', '\\\'" \u0000 % ? `')
+    const done = await appendUpdates(
+      db,
+      [
+        { sectionId: one, epoch: 1, update: write('a', 1), userId },
+        { sectionId: two, epoch: 1, update: pen()('b', 2), userId: null },
+        { sectionId: one, epoch: 1, update: odd, userId },
+      ],
+      { before: false },
+    )
+    const rows = await rowsOf(one)
+    expect(rows.at(-1)?.seq).toBe(done.find((d) => d.sectionId === one)?.last)
+    expect(Buffer.compare(rows.at(-1)?.update ?? new Uint8Array(), odd)).toBe(0)
+    expect((await lastSeqs(db, [two]))[0]?.seq).toBe(done.find((d) => d.sectionId === two)?.last)
+    expect(await contents(two)).toEqual({ b: 2 })
+    expect(rows.map((row) => row.userId)).toEqual([null, userId, userId])
   })
 
   it('loses nothing when folding meets appending, whoever appends', async () => {
@@ -77,7 +110,7 @@ describe('the update log', () => {
       const write = pen()
       for (let i = 0; i < 60; i++) {
         const key = `w${w}.${i}`
-        await appendUpdates(db, [{ sectionId, epoch: 1, update: write(key, i), userId: null }])
+        await appendUpdates(db, [{ sectionId, epoch: 1, update: write(key, i), userId: null }], { before: w === 1 })
         expected[key] = i
       }
     })
