@@ -46,7 +46,7 @@ export function Readings() {
         <Line label="Saturated thickness">{show(read.saturated, 'length', units)}</Line>
         <Line label="Straight line is off by">{show(off, 'length', units)}</Line>
         <Line label={time.exit ? `Travel time to ${exitWords(time.exit, sheet.get())}` : 'Travel time out'}>
-          {time.days === null ? 'never leaves' : showTime(time.days)}
+          {time.days === null ? <span className="why">{time.why ?? 'never leaves'}</span> : showTime(time.days)}
         </Line>
       </dl>
     </Box>
