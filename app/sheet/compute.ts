@@ -14,7 +14,7 @@ export const solveHere: Solve = (section, caseId) => {
   const shown = applyCase(section, caseId)
   return {
     solution,
-    footing: solution.status === 'solved' ? footing(shown, solution) : [],
+    footing: footing(shown, solution),
     problems: solution.status === 'solved' ? solution.warnings : [...solution.reason, ...solution.warnings],
   }
 }
