@@ -33,6 +33,7 @@ describe('kill -9 under load', () => {
     practice = await makePractice(connection.db)
   })
   afterAll(async () => {
+    await sidecar?.end('SIGKILL')
     await connection.close()
     await mariadb.remove()
   })

@@ -167,6 +167,7 @@ let bundled: Promise<string> | null = null
 /** The sidecar as it is shipped: one bundle. Built once a run, inside the clone, where its packages are found. */
 function bundle(): Promise<string> {
   const outfile = path.resolve(`node_modules/.cache/doab-live-test/${process.pid}/main.js`)
+  if (!bundled) process.once('exit', () => rmSync(path.dirname(outfile), { recursive: true, force: true }))
   bundled ??= build({
     entryPoints: ['realtime/main.ts'],
     outfile,
