@@ -1,2 +1,8 @@
+export { CAUTION, type ComposeView, compose } from './compose'
+export { fitText, textWidth } from './fonts/measure'
+export { hatchOf } from './hatch/kind'
+export { hatchMarks } from './hatch/marks'
+export { deviceX, deviceY, layout, type ShownView, type Viewport } from './layout'
 export * from './plot'
 export * from './scene'
+export { inkOf, type Palette, palette, ROLES, type Theme } from './styles'

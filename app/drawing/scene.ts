@@ -91,13 +91,20 @@ type ItemBase = {
   panel: PanelId
   /** Accessible name, where the item can be picked. */
   label?: string
+  /** Id of a clip of the scene: only what lies inside is drawn. */
+  clip?: string
 }
 
 export type PanelId = 'section' | 'discharge' | 'depth' | 'time' | 'sheet'
 
-export type PathItem = ItemBase & { kind: 'path'; points: World[]; closed: boolean; smooth?: never }
+export type PathItem = ItemBase & {
+  kind: 'path'
+  points: World[]
+  closed: boolean /** Short strokes on one side, as ground and no-flow banks are drawn. */
+  ticks?: 'below' | 'left' | 'right'
+}
 /** A filled outline with a hatch; `holes` are cut out. */
-export type AreaItem = ItemBase & { kind: 'area'; rings: World[][]; hatch: Hatch; clip?: string }
+export type AreaItem = ItemBase & { kind: 'area'; rings: World[][]; hatch: Hatch }
 export type TextItem = ItemBase & {
   kind: 'text'
   at: World
@@ -134,7 +141,6 @@ export type SymbolItem = ItemBase & {
   direction?: World /** 0…1, relative length or size. */
   scale?: number
 }
-export type ClipItem = ItemBase & { kind: 'clip'; clipId: string; rings: World[][] }
 /** A freehand or straight mark of the mark-up, already outlined. */
 export type InkItem = ItemBase & {
   kind: 'ink'
@@ -143,7 +149,7 @@ export type InkItem = ItemBase & {
   highlight: boolean
 }
 
-export type Item = PathItem | AreaItem | TextItem | SymbolItem | ClipItem | InkItem
+export type Item = PathItem | AreaItem | TextItem | SymbolItem | InkItem
 
 export type Panel = {
   id: PanelId
@@ -173,6 +179,9 @@ export type Scene = {
   /** One x scale for the drawing and every strip, metres. */
   x: { min: number; max: number }
   panels: Panel[]
+  clips: { id: string; panel: PanelId; ring: World[] }[]
+  units: 'si' | 'us'
+  grid: boolean
   items: Item[]
   title: TitleBlock
   caution: string
