@@ -7,19 +7,16 @@ export function PenChoices() {
   const layerId = useSheetState((state) => state.layerId)
   const open = layers.filter(({ locked }) => !locked)
   return (
-    <div className="pen-choices">
-      <label>
-        On layer
-        <select value={layerId ?? ''} onChange={(event) => sheet.set({ layerId: event.target.value || null })}>
-          <option value="">a new layer of today</option>
-          {open.map((layer) => (
-            <option key={layer.id} value={layer.id}>
-              {layer.name} · {layer.date}
-            </option>
-          ))}
-        </select>
-      </label>
-      <span className="quiet">Mark-up lies over the model and is never read by the calculation.</span>
-    </div>
+    <label className="pen-choices" title="Mark-up lies over the model and is never read by the calculation.">
+      <span>On layer</span>
+      <select value={layerId ?? ''} onChange={(event) => sheet.set({ layerId: event.target.value || null })}>
+        <option value="">today’s</option>
+        {open.map((layer) => (
+          <option key={layer.id} value={layer.id}>
+            {layer.name.includes(layer.date) ? layer.name : `${layer.name} · ${layer.date}`}
+          </option>
+        ))}
+      </select>
+    </label>
   )
 }

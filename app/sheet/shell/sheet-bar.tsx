@@ -1,5 +1,7 @@
+import { PenChoices } from './pen-choices'
 import type { Showing } from './room'
 import { ShellSymbol, type ShellSymbolName } from './symbols'
+import { MARKING_TOOLS } from './tools'
 import { useSheet, useSheetState } from './use-sheet'
 import { ViewButtons } from './view-buttons'
 
@@ -9,6 +11,7 @@ export function SheetBar({ showing, onShow }: { showing: Showing; onShow: (next:
   const may = useSheetState((state) => state.may)
   const canUndo = useSheetState((state) => state.canUndo)
   const canRedo = useSheetState((state) => state.canRedo)
+  const marking = useSheetState((state) => MARKING_TOOLS.has(state.tool))
   return (
     <div className="sheet-bar">
       <fieldset className="choice" aria-label="Show the section as">
@@ -26,6 +29,7 @@ export function SheetBar({ showing, onShow }: { showing: Showing; onShow: (next:
         </fieldset>
       ) : null}
       <StatusLine />
+      {may === 'write' && marking ? <PenChoices /> : null}
       {showing === 'drawing' ? (
         <>
           <Toggles />

@@ -1,6 +1,5 @@
-import { PenChoices } from './pen-choices'
 import { ToolSymbol } from './symbols'
-import { MARKING_TOOLS, READING_TOOLS, TOOL_GROUPS } from './tools'
+import { READING_TOOLS, TOOL_GROUPS } from './tools'
 import { useSheet, useSheetState } from './use-sheet'
 
 /** The tools in one rail below the drawing. Keyboard: one stop, arrows move along, as in any toolbar. */
@@ -15,8 +14,7 @@ export function ToolRail() {
           ({ length }) => length,
         )
   return (
-    <section className="rail-place" aria-label="Tools and mark-up">
-      {may === 'write' && MARKING_TOOLS.has(tool) ? <PenChoices /> : null}
+    <section className="rail-place" aria-label="Tool rail">
       <div
         className="tool-rail"
         role="toolbar"

@@ -31,8 +31,10 @@ export function ViewButtons() {
   listed.sort((a, b) => a - b)
   return (
     <fieldset className="bar-group view-buttons" aria-label="View">
-      <IconButton name="farther" label="Farther away (−)" onPress={() => zoom(1.4)} />
-      <IconButton name="closer" label="Closer (+)" onPress={() => zoom(1 / 1.4)} />
+      <span className="zoom-pair">
+        <IconButton name="farther" label="Farther away (−)" onPress={() => zoom(1.4)} />
+        <IconButton name="closer" label="Closer (+)" onPress={() => zoom(1 / 1.4)} />
+      </span>
       <IconButton name="fit" label="The whole strip (0)" onPress={() => sheet.set({ view: null })} />
       <label className="exaggeration" title="Vertical exaggeration">
         <span aria-hidden="true">VE</span>
