@@ -14,7 +14,8 @@ export type Device = {
   gap: number
 }
 
-const STEPS = [1, 2, 5, 10, 20, 50, 100, 200, 500, 1000]
+// Even figures that people read off a title block; fine enough that the drawing fills its place.
+const STEPS = [1, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10, 12, 15, 20, 25, 30, 40, 50, 60, 80, 100, 150, 200, 300, 500, 1000]
 /** The largest usual exaggeration (1, 2, 5 …) not above the one that just fits. */
 export function neatExaggeration(fits: number): number {
   const found = [...STEPS].reverse().find((step) => step <= fits)

@@ -22,6 +22,8 @@ export type Viewport = {
   rulers?: boolean
   /** Horizontal scale 1:n on paper. */
   scale?: number | null
+  /** Kept clear around drawing and rulers, device units: a frame, a legend, a title block. */
+  inset?: { left: number; top: number; right: number; bottom: number }
 }
 
 /**
@@ -30,18 +32,22 @@ export type Viewport = {
  */
 export function layout(scene: Scene, viewport: Viewport, theme: Theme): PlotList {
   const { width, height, view = null, unit = SCREEN, foot = true, scale = null } = viewport
+  const inset = viewport.inset ?? { left: 0, top: 0, right: 0, bottom: 0 }
   const ruled = viewport.rulers !== false
-  const small = width < 520
+  const small = width / unit < 138
   const device: Device = {
     width,
     height,
     unit,
     gap: ruled ? 2 * unit : 0,
     area: {
-      x: ruled ? (small ? 9.5 : 12.5) * unit : 0,
-      y: ruled ? 2.5 * unit : 0,
-      width: Math.max(width - (ruled ? (small ? 11.5 : 16) * unit : 0), 10),
-      height: Math.max(height - (ruled ? 2.5 + 5.5 : 0) * unit - (foot ? FOOT_HEIGHT * unit : 0), 10),
+      x: inset.left + (ruled ? (small ? 9.5 : 12.5) * unit : 0),
+      y: inset.top + (ruled ? 2.5 * unit : 0),
+      width: Math.max(width - inset.left - inset.right - (ruled ? (small ? 11.5 : 16) * unit : 0), 10),
+      height: Math.max(
+        height - inset.top - inset.bottom - (ruled ? 2.5 + 5.5 : 0) * unit - (foot ? FOOT_HEIGHT * unit : 0),
+        10,
+      ),
     },
   }
   const { frames, exaggeration } = framesOf(scene, device, view)

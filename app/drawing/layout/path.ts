@@ -6,7 +6,7 @@ export const fixed = (value: number) => String(Math.round(value * 100) / 100)
 
 /** How far outside its panel a point may lie before it is drawn at the rim: canvas and SVG lose precision far out. */
 const FAR = 20_000
-const rim = (value: number) => (value > FAR ? FAR : value < -FAR ? -FAR : value)
+const rim = (value: number) => (value > FAR ? FAR : Math.max(value, -FAR))
 
 export const deviceX = (frame: PanelFrame, x: number) => frame.ax + frame.bx * x
 export const deviceY = (frame: PanelFrame, z: number) => frame.ay + frame.by * z
