@@ -12,6 +12,8 @@ export default [
     route('sign-out', 'routes/_account/sign-out.tsx'),
   ]),
 
+  route('sections/:sectionId', 'routes/_practice/section.tsx'),
+
   route('mailbox', 'routes/mailbox.tsx'),
   route('health', 'routes/health.ts'),
   route('api/auth/*', 'routes/api/auth.ts'),
