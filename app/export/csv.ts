@@ -2,7 +2,7 @@ import { type Section, shapeOf, type UnitSet } from '~/section'
 import { readAt, type Solution, travelTime } from '~/solver'
 
 /** A cell: numbers as they are, text quoted, and never read as a formula by a spreadsheet. */
-export function csvField(value: string | number | null): string {
+export function csvCell(value: string | number | null): string {
   if (value === null) return ''
   if (typeof value === 'number') return Number.isFinite(value) ? String(value) : ''
   const safe = /^[=+\-@\t\r]/.test(value) ? `'${value}` : value
@@ -29,7 +29,7 @@ export function profileCsv(
     `straight line [${length.unit}]`,
     'time to leave [d]',
   ]
-  const lines = [head.map(csvField).join(',')]
+  const lines = [head.map(csvCell).join(',')]
   if (solution.status === 'solved') {
     const { left, right, profile } = solution
     const xs = new Set<number>([
@@ -55,7 +55,7 @@ export function profileCsv(
             at.straight * length.times,
             travelTime(solution, x).days,
           ]
-            .map((value) => csvField(value === null ? null : Number(value.toPrecision(9))))
+            .map((value) => csvCell(value === null ? null : Number(value.toPrecision(9))))
             .join(','),
         )
     }
@@ -63,12 +63,5 @@ export function profileCsv(
   return `${lines.join('\r\n')}\r\n`
 }
 
-/** The balance: what enters and leaves, by bank, feature, zone and seepage reach. */
-export function ledgerCsv(solution: Solution, { units = 'si' }: { units?: UnitSet } = {}): string {
-  const flow = shapeOf('flow', units)
-  const lines = [['object', 'path', `rate [${flow.unit}]`, 'state'].map(csvField).join(',')]
-  if (solution.status === 'solved')
-    for (const { label, of, rate, state } of solution.exchanges)
-      lines.push([label, of, Number((rate * flow.times).toPrecision(9)), state ?? ''].map(csvField).join(','))
-  return `${lines.join('\r\n')}\r\n`
-}
+/** The section document as text, in and out again without loss. */
+export const sectionJson = (section: Section): string => `${JSON.stringify(section, null, 2)}\n`

@@ -1,5 +1,5 @@
 export { csvCell, profileCsv, sectionJson } from './csv'
-export { describe, fittingScale, PAPERS, type Paper, type SheetOptions, sheetSvg } from './sheet'
+export { fittingScale, inWords, PAPERS, type Paper, type SheetOptions, sheetSvg } from './sheet'
 export { paintSvg, type SvgOptions } from './svg'
 export { firstViewSvg, thumbnailSvg } from './views'
 export { clean, escapeXml } from './xml'
