@@ -14,6 +14,11 @@ export default [
 
   route('sections/:sectionId', 'routes/_practice/section.tsx'),
 
+  route('s/:token', 'routes/s.$token.tsx'),
+  route('api/sections/:sectionId/sheet.svg', 'routes/api/sections/sheet-svg.ts'),
+  route('api/sections/:sectionId/profile.csv', 'routes/api/sections/profile-csv.ts'),
+  route('api/sections/:sectionId/section.json', 'routes/api/sections/section-json.ts'),
+
   route('mailbox', 'routes/mailbox.tsx'),
   route('health', 'routes/health.ts'),
   route('api/auth/*', 'routes/api/auth.ts'),

@@ -11,13 +11,6 @@ export async function loader({ params, request }: Route.LoaderArgs) {
 export const shouldRevalidate = ({ currentParams, nextParams }: Route.ShouldRevalidateFunctionArgs) =>
   currentParams.token !== nextParams.token
 
-// The address is a secret: not for search machines, not for the next site's log.
-export const headers = () => ({
-  'referrer-policy': 'no-referrer',
-  'x-robots-tag': 'noindex',
-  'cache-control': 'no-store',
-})
-
 export const meta: Route.MetaFunction = ({ loaderData }) => [
   { title: loaderData ? `${loaderData.live.section.title} · Doab` : 'Doab' },
   { name: 'robots', content: 'noindex' },
