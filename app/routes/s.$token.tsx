@@ -1,3 +1,4 @@
+import type { ShouldRevalidateFunctionArgs } from 'react-router'
 import { SharedSheet } from '~/pages/share/shared-sheet'
 import { openShared } from '~/server/sections/open-section.server'
 import type { Route } from './+types/s.$token'
@@ -8,7 +9,7 @@ export async function loader({ params, request }: Route.LoaderArgs) {
   return { ...opened, token: params.token, userId: null }
 }
 
-export const shouldRevalidate = ({ currentParams, nextParams }: Route.ShouldRevalidateFunctionArgs) =>
+export const shouldRevalidate = ({ currentParams, nextParams }: ShouldRevalidateFunctionArgs) =>
   currentParams.token !== nextParams.token
 
 export const meta: Route.MetaFunction = ({ loaderData }) => [

@@ -2,7 +2,7 @@ import { eq } from 'drizzle-orm'
 import { z } from 'zod'
 import { can } from '~/access/decide'
 import type { Actor } from '~/access/facts.server'
-import { PAPERS, profileCsv, sectionJson, sheetSvg } from '~/export'
+import { profileCsv, sectionJson, sheetSvg } from '~/export'
 import { applyCase } from '~/section'
 import { solveSteady } from '~/solver'
 import type { Executor } from '../../../drizzle/client'
@@ -15,11 +15,11 @@ import { storedSection } from './stored-section.server'
 export type FileKind = 'sheet.svg' | 'profile.csv' | 'section.json'
 export type SectionFile = { name: string; type: string; body: string }
 
-const paperNames = Object.keys(PAPERS).filter((name): name is keyof typeof PAPERS => name in PAPERS)
+const PAPERS = ['A4', 'A3', 'Letter', 'Tabloid'] as const
 
 const asked = z.object({
   case: z.string().optional(),
-  paper: z.enum(paperNames, `paper: use ${paperNames.join(', ')}.`).default('A4'),
+  paper: z.enum(PAPERS, `paper: use ${PAPERS.join(', ')}.`).default('A4'),
   scale: z.coerce
     .number('scale: give the n of 1:n as a number.')
     .min(1, 'scale: give 1 or more.')
