@@ -122,6 +122,9 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
   }
 
   function tellView({ frame: panel, list }: Picture) {
+    // Device x = ax + bx·x, y = ay + by·z: for tests and for whoever puts something beside the drawing.
+    const scales = `${panel.ax} ${panel.bx} ${panel.ay} ${panel.by}`
+    if (element.dataset.scales !== scales) element.dataset.scales = scales
     const seen = seenIn(panel, list.exaggeration)
     if (same(seen, sheet.get().seen)) return
     sheet.set({ seen })

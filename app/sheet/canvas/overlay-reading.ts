@@ -45,7 +45,8 @@ export function paintReading(ctx: CanvasRenderingContext2D, { picture, state }: 
 function valueIn(panel: string, read: Reading): number | null {
   if (panel === 'section') return read.head
   if (panel === 'discharge') return read.flow
-  if (panel === 'depth') return read.depth
+  // Plotted downwards, as the drawing does.
+  if (panel === 'depth') return -read.depth
   return null
 }
 function textIn(frame: PanelFrame, read: Reading, units: 'si' | 'us'): string {
