@@ -5,7 +5,8 @@ import { readAt, type Solution, travelTime } from '~/solver'
 export function csvCell(value: string | number | null): string {
   if (value === null) return ''
   if (typeof value === 'number') return Number.isFinite(value) ? String(value) : ''
-  const safe = /^[=+\-@\t\r]/.test(value) ? `'${value}` : value
+  const text = value.replaceAll('\u0000', '')
+  const safe = /^\s*[=+\-@|%\t\r]/.test(text) ? `'${text}` : text
   return /[",\n\r']/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe
 }
 

@@ -1,41 +1,67 @@
-import { compose, layout, palette, type Theme } from '~/drawing'
-import { applyCase, type Section, type UnitSet } from '~/section'
+import { type ComposeView, compose, layout, type PlotList, type Role, type Theme } from '~/drawing'
+import { applyCase, type Section } from '~/section'
 import type { Solution } from '~/solver'
-import { inWords } from './sheet'
-import { paintSvg } from './svg'
+import { FAMILY } from './fonts'
+import { paintSvg } from './paint'
+import { sayInWords } from './words'
+import { num, xml } from './xml'
 
-/** Small true drawing with its water table for lists: no rulers, no text. Inks by CSS variables would not survive a download. */
-export function thumbnailSvg(section: Section, solution: Solution, size = { width: 240, height: 96 }): string {
-  const scene = compose(section, solution, { grid: false, arrows: false, strips: false, markup: false })
-  const list = layout(scene, { ...size, unit: 1.7, foot: false, rulers: false }, 'light')
-  return paintSvg(list, {
-    title: section.title,
-    description: inWords(section, solution, 'si'),
-    prefix: `t${hash(section.title + JSON.stringify(section.ground) + section.bodies.length)}`,
-    background: palette('light').sheet,
-    className: 'thumbnail',
-  })
+/** For inside a page: no ids but those of the clips, no file header. */
+const inline = (list: PlotList, label: string, attributes: string, prefix: string) =>
+  `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${num(list.width)} ${num(list.height)}" ${attributes} font-family="${FAMILY.sans}" role="img" aria-label="${xml(label)}">${paintSvg(list, { prefix, named: false })}</svg>`
+
+/** What a small drawing has room for. */
+const SMALL: ReadonlySet<Role> = new Set<Role>([
+  'soil',
+  'ground',
+  'base',
+  'base-fill',
+  'body',
+  'body-edge',
+  'open-water',
+  'stage',
+  'saturated',
+  'water-table',
+  'wall',
+  'bank-no-flow',
+  'divide',
+])
+
+/** A small true drawing with its water table for lists: no text, no rulers. Two on a page share no ids. */
+export function thumbnailSvg(
+  section: Section,
+  solution: Solution,
+  { width = 240, height = 96, theme = 'light' }: { width?: number; height?: number; theme?: Theme } = {},
+): string {
+  const scene = compose(section, solution, { arrows: false, grid: false, strips: false, markup: false })
+  const items = scene.items.filter(({ role, kind }) => SMALL.has(role) && kind !== 'text' && kind !== 'symbol')
+  const list = layout({ ...scene, items }, { width, height, unit: 1.6, foot: false, rulers: false }, theme)
+  const label = section.title || 'Section'
+  return inline(
+    list,
+    label,
+    `width="${num(width)}" height="${num(height)}"`,
+    `t${hash(JSON.stringify([section, theme]))}-`,
+  )
 }
 
-/** The first view of the sheet, made on the server with the canvas's own plot list; it scales to the room it is given. */
+/**
+ * The sheet's first view, as the canvas will draw it at a nominal size: for the page that the server renders. It scales with the
+ * place it stands in and keeps its proportions.
+ */
 export function firstViewSvg(
   section: Section,
   solution: Solution,
-  options: { caseId?: string | null; units?: UnitSet; theme?: Theme; width?: number; height?: number } = {},
+  options: ComposeView & { caseId?: string | null; width?: number; height?: number; theme?: Theme } = {},
 ): string {
-  const shown = options.caseId ? applyCase(section, options.caseId) : section
-  const theme = options.theme ?? 'light'
-  const scene = compose(shown, solution, { units: options.units })
-  const list = layout(scene, { width: options.width ?? 1080, height: options.height ?? 700 }, theme)
-  return paintSvg(list, {
-    title: section.title,
-    description: inWords(shown, solution, options.units ?? 'si'),
-    prefix: 'first',
-    size: { width: '100%', height: '100%' },
-  })
+  const { caseId, width = 1080, height = 700, theme = 'light', ...view } = options
+  const shown = caseId ? applyCase(section, caseId) : section
+  const list = layout(compose(shown, solution, view), { width, height }, theme)
+  const label = `${section.title || 'Section'}. ${sayInWords(shown, solution, view.units ?? 'si')}`
+  return inline(list, label, 'width="100%" height="100%" preserveAspectRatio="xMidYMid meet"', 'first-')
 }
 
-/** Short name for ids: two thumbnails on a page must not share clips. */
+/** FNV-1a: a short name that differs where the drawing differs. */
 function hash(text: string): string {
   let value = 2166136261
   for (let i = 0; i < text.length; i++) value = Math.imul(value ^ text.charCodeAt(i), 16777619)
