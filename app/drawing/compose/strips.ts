@@ -25,7 +25,7 @@ export function composeStrips({ samples, items, units, left, right }: Context): 
       id: 'depth',
       title: 'Depth to water',
       unit: `${shapeOf('length', units).unit} below ground`,
-      range: { min: -deep - reach * 0.12, max: -shallow + reach * 0.12 },
+      range: { min: -deep - reach * 0.12, max: -shallow + reach * 0.34 },
       share: 0.17,
     },
   ]

@@ -5,7 +5,14 @@ import { answerOf, strip } from '../published/strip'
 import { rain, sectionOf } from '../testing'
 
 const mound = answerOf(
-  strip({ length: 200, k: 5, left: 7, right: 6.9, w: 0.001, more: { materials: [{ id: 'sand', k: 5, porosity: 0.3 }] } }),
+  strip({
+    length: 200,
+    k: 5,
+    left: 7,
+    right: 6.9,
+    w: 0.001,
+    more: { materials: [{ id: 'sand', k: 5, porosity: 0.3 }] },
+  }),
 )
 
 describe('inside the section', () => {
@@ -68,6 +75,21 @@ describe('inside the section', () => {
     expect(travelTime(solution, 60)).toMatchObject({ exit: 'd1' })
     expect(travelTime(solution, 150)).toMatchObject({ exit: 'd1' })
     expect(travelTime(solution, 120)).toEqual({ days: 0, exit: 'd1' })
+  })
+  it('does not leave by a closed bank: from there the water has the whole way to go', () => {
+    const solution = answerOf(
+      strip({
+        length: 100,
+        k: 1,
+        left: 5,
+        right: 5,
+        w: 1e-3,
+        more: { left: { kind: 'no-flow', x: 0 }, materials: [{ id: 'sand', k: 1, porosity: 0.3 }] },
+      }),
+    )
+    expect(travelTime(solution, 0).exit).not.toBe('left')
+    expect(travelTime(solution, 100)).toEqual({ days: 0, exit: 'right' })
+    expect(travelTime(solution, 1)).toMatchObject({ exit: 'right' })
   })
   it('says why there is no time without a porosity', () => {
     const solution = answerOf(strip({ length: 100, k: 5, left: 8, right: 6 }))

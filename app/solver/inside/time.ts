@@ -3,18 +3,18 @@ import { integrate } from './quadrature'
 import { heightOf, materialAt, type Station, shareBelow, stationAt, storedWater } from './stream'
 
 /** Whoever can end a path: banks, and features that take water. */
-type Stop = { x: number; exit: string; always: boolean }
+type Stop = { x: number; exit: string; always: boolean; feature: boolean }
 
 function stops(solution: Solved): Stop[] {
   const list: Stop[] = [
-    { x: solution.left, exit: 'left', always: true },
-    { x: solution.right, exit: 'right', always: true },
+    { x: solution.left, exit: 'left', always: true, feature: false },
+    { x: solution.right, exit: 'right', always: true, feature: false },
   ]
   for (const exchange of solution.exchanges) {
     const id = exchange.of.startsWith('features.') ? exchange.of.slice('features.'.length) : null
     if (id === null || exchange.x === undefined || Array.isArray(exchange.head)) continue
     // A ditch that takes water ends every path that reaches it (METHODS §2a.15); another feature where q changes sign across it.
-    list.push({ x: exchange.x, exit: id, always: exchange.kind === 'ditch' && exchange.rate > 0 })
+    list.push({ x: exchange.x, exit: id, always: exchange.kind === 'ditch' && exchange.rate > 0, feature: true })
   }
   return list.sort((a, b) => a.x - b.x)
 }
@@ -49,9 +49,11 @@ export function travelTime(solution: Solution, from: number): TravelTime {
   const goesRight = right.flow > still && from < solution.right
   const goesLeft = left.flow < -still && from > solution.left
   const here = stops(solution).find((stop) => stop.x === from)
-  if (here && (here.always || (left.flow > still && right.flow < -still)))
-    if ((left.flow > still && !goesRight) || (right.flow < -still && !goesLeft) || here.always)
-      return { days: 0, exit: here.exit }
+  const arrivesHere = left.flow > still || right.flow < -still
+  // A ditch ends every path that reaches it; a bank only takes what flows towards it.
+  if (here?.feature && (here.always || (arrivesHere && !goesRight && !goesLeft))) return { days: 0, exit: here.exit }
+  if (here && !here.feature && (here.exit === 'left' ? right.flow < -still : left.flow > still))
+    return { days: 0, exit: here.exit }
   if (!goesRight && !goesLeft) return never('The water stands still here: at a divide it never leaves.')
   // Fed from a feature both ways: the shorter name for the path is the way of the larger flow.
   const sign = goesRight && goesLeft ? (right.flow >= -left.flow ? 1 : -1) : goesRight ? 1 : -1
