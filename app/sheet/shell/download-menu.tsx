@@ -1,10 +1,10 @@
 import { useState } from 'react'
 import { Button, Dialog, DialogTrigger, Popover } from 'react-aria-components'
+import { PAPERS } from '~/drawing'
 import { usePopClass } from './pop'
 import { ShellSymbol } from './symbols'
 import { useSheetState } from './use-sheet'
 
-export const PAPERS = ['A4', 'A3', 'A2', 'A1'] as const
 export const SCALES = [100, 200, 250, 500, 1000, 1250, 2000, 2500, 5000] as const
 
 export type Download = { sectionId: string; token: string | null; caseId: string | null }
@@ -49,7 +49,7 @@ export function DownloadMenu({ token }: { token: string | null }) {
               <label>
                 Paper
                 <select value={paper} onChange={(event) => setPaper(event.target.value)}>
-                  {PAPERS.map((name) => (
+                  {Object.keys(PAPERS).map((name) => (
                     <option key={name} value={name}>
                       {name} landscape
                     </option>
