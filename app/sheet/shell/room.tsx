@@ -29,7 +29,7 @@ export function Room({ first, live }: { first: First; live: LiveSheet | null }) 
       data-shut={shut || undefined}
       data-presenting={presenting || undefined}
     >
-      <TopBar surround={first} onRetry={live ? () => live.connection.retry() : undefined} />
+      <TopBar surround={first} shut={shut} onRetry={live ? () => live.connection.retry() : undefined} />
       <main className="sheet-main" aria-label="Sheet">
         {shut ? null : <SheetBar showing={showing} onShow={setShowing} />}
         <Notices surround={first} />

@@ -9,8 +9,11 @@ import { StoredLight } from './stored-light'
 import type { Surround } from './surround'
 import { TitleField } from './title-field'
 
-/** Where this is, which case, who else is here, whether it is stored, and the ways out of the door. */
-export function TopBar({ surround, onRetry }: { surround: Surround; onRetry?: () => void }) {
+/**
+ * Where this is, which case, who else is here, whether it is stored, and the ways out of the door. `shut`: the section may not be
+ * seen any more, so nothing of it stands here either.
+ */
+export function TopBar({ surround, onRetry, shut }: { surround: Surround; onRetry?: () => void; shut: boolean }) {
   const { site, token } = surround
   return (
     <header className="top-bar">
@@ -26,23 +29,37 @@ export function TopBar({ surround, onRetry }: { surround: Surround; onRetry?: ()
             <span className="brand-name">Doab</span>
           </Link>
         )}
-        {site && !token ? (
-          <Link to={`/sites/${site.id}`} className="site-name">
-            {site.name}
-          </Link>
-        ) : site ? (
-          <span className="site-name">{site.name}</span>
-        ) : null}
-        <TitleField />
+        {shut ? null : (
+          <>
+            <SiteName site={site} here={token !== null} />
+            <TitleField />
+          </>
+        )}
       </div>
-      <CaseTabs />
+      {shut ? null : <CaseTabs />}
       <div className="bar-end">
-        <People />
+        {shut ? null : <People />}
         <StoredLight onRetry={onRetry} />
-        {token ? null : <ShareButton />}
-        <DownloadMenu token={token} />
-        <MoreMenu />
+        {shut ? null : (
+          <>
+            {token ? null : <ShareButton />}
+            <DownloadMenu token={token} />
+            <MoreMenu />
+          </>
+        )}
       </div>
     </header>
+  )
+}
+
+/** Holders of a link have no way into the site; they may know its name where the server gives it. */
+function SiteName({ site, here }: { site: Surround['site']; here: boolean }) {
+  if (!site) return null
+  return here ? (
+    <span className="site-name">{site.name}</span>
+  ) : (
+    <Link to={`/sites/${site.id}`} className="site-name">
+      {site.name}
+    </Link>
   )
 }
