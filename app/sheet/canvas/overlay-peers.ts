@@ -1,6 +1,7 @@
-import { type OverInks, peerInk } from './overlay-inks'
+import type { OverInks } from './overlay-inks'
 import { outlinePicked } from './overlay-picked'
 import type { Over } from './overlay-types'
+import { peerInk } from './peer-inks'
 import { toPixels } from './surface'
 
 const FONT = '600 11px "Work Sans", "DejaVu Sans", sans-serif'
