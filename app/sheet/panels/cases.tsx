@@ -1,6 +1,6 @@
 import { useState } from 'react'
 import { type Case, OFF_LISTS, valueAt } from '~/section'
-import { IconButton } from '../shell/sheet-bar'
+import { IconButton } from '../shell/icon-button'
 import { useSheet, useSheetState } from '../shell/use-sheet'
 import { Box } from './box'
 import { CompareCases } from './compare'

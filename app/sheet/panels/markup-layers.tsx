@@ -1,5 +1,5 @@
 import type { MarkupLayer } from '~/live'
-import { IconButton } from '../shell/sheet-bar'
+import { IconButton } from '../shell/icon-button'
 import { useSheet, useSheetState } from '../shell/use-sheet'
 import { Box } from './box'
 import { TextField } from './fields/text-field'

@@ -5,14 +5,12 @@ import { FirstDrawing } from './first-drawing'
 import { Leftovers } from './leftovers'
 import { barred, Notices } from './notices'
 import type { LiveSheet } from './open-live'
-import { SheetBar } from './sheet-bar'
+import { SheetBar, type Showing } from './sheet-bar'
 import { Side } from './side'
 import type { First } from './surround'
 import { ToolRail } from './tool-rail'
 import { TopBar } from './top-bar'
 import { useSheetState } from './use-sheet'
-
-export type Showing = 'drawing' | 'table'
 
 /** The room the drawing hangs in: bar above, rail below, the side with particulars and answers. */
 export function Room({ first, live }: { first: First; live: LiveSheet | null }) {

@@ -1,9 +1,10 @@
+import { IconButton } from './icon-button'
 import { PenChoices } from './pen-choices'
-import type { Showing } from './room'
-import { ShellSymbol, type ShellSymbolName } from './symbols'
 import { MARKING_TOOLS } from './tools'
 import { useSheet, useSheetState } from './use-sheet'
 import { ViewButtons } from './view-buttons'
+
+export type Showing = 'drawing' | 'table'
 
 /** The slim bar on top of the drawing: drawing or table, steps back and forth, what is shown, how it is seen. */
 export function SheetBar({ showing, onShow }: { showing: Showing; onShow: (next: Showing) => void }) {
@@ -37,28 +38,6 @@ export function SheetBar({ showing, onShow }: { showing: Showing; onShow: (next:
         </>
       ) : null}
     </div>
-  )
-}
-
-export function IconButton(props: {
-  name: ShellSymbolName
-  label: string
-  disabled?: boolean
-  pressed?: boolean
-  onPress: () => void
-}) {
-  return (
-    <button
-      type="button"
-      className="icon-button"
-      aria-label={props.label}
-      title={props.label}
-      disabled={props.disabled}
-      aria-pressed={props.pressed}
-      onClick={props.onPress}
-    >
-      <ShellSymbol name={props.name} />
-    </button>
   )
 }
 

@@ -1,6 +1,6 @@
 import { plain } from '../panels/fields/quantities'
 import type { View } from '../state'
-import { IconButton } from './sheet-bar'
+import { IconButton } from './icon-button'
 import { useSheet, useSheetState } from './use-sheet'
 
 export const EXAGGERATIONS = [1, 2, 4, 5, 8, 10, 15, 20, 30, 50] as const

@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react'
 import type { ListName, ListObject } from '~/live'
-import { IconButton } from '../../shell/sheet-bar'
+import { IconButton } from '../../shell/icon-button'
 import { useSheet, useSheetState } from '../../shell/use-sheet'
 import { show, useUnits } from '../fields/quantities'
 import type { Spec } from '../fields/specs'

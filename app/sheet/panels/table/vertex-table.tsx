@@ -1,6 +1,6 @@
 import type { LineId } from '~/live'
 import type { Point } from '~/section'
-import { IconButton } from '../../shell/sheet-bar'
+import { IconButton } from '../../shell/icon-button'
 import { useSheet, useSheetState } from '../../shell/use-sheet'
 import { show, useUnits } from '../fields/quantities'
 import { QuantityField } from '../fields/quantity-field'
