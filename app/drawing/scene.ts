@@ -48,6 +48,7 @@ export type Role =
   | 'limit'
   | 'limit-broken'
   | 'limit-holds'
+  | 'limit-clear'
   | 'note'
   | 'dimension'
   | 'pen'
@@ -132,6 +133,8 @@ export type SymbolName =
   | 'spring'
   | 'problem'
   | 'inflow-arrow'
+  | 'holds'
+  | 'broken'
 /** A symbol of fixed paper size at a world anchor; `angle` in world terms is given by a direction vector and laid out after exaggeration. */
 export type SymbolItem = ItemBase & {
   kind: 'symbol'

@@ -140,6 +140,7 @@ const STYLES: Record<Role, Style> = {
   observation: { stroke: 'ink', width: 0.3, fill: 'sheet' },
   limit: { stroke: 'ink', width: 0.45 },
   'limit-broken': { stroke: 'trouble', width: 0.55, fill: 'troubleTint' },
+  'limit-clear': { stroke: 'holds', width: 0.22, dash: [1, 0.8] },
   'limit-holds': { stroke: 'holds', width: 0.5 },
   note: { stroke: 'ink', width: 0.3, fill: 'ink' },
   dimension: { stroke: 'ink', width: 0.2, fill: 'ink' },

@@ -48,6 +48,8 @@ function composeBank(context: Context, side: 'left' | 'right', bank: Bank): void
       closed: false,
       label: bank.name ?? `${side} bank, given inflow`,
     })
+    const end = side === 'left' ? context.samples[0] : context.samples.at(-1)
+    const wet = end ? Math.max(end.head, base) : ground
     for (const share of [0.25, 0.5, 0.75])
       items.push({
         ...common,
@@ -56,7 +58,7 @@ function composeBank(context: Context, side: 'left' | 'right', bank: Bank): void
         id: `${side}-in-${share}`,
         role: 'bank-inflow',
         layer: 'water',
-        at: { x, z: base + share * (ground - base) },
+        at: { x, z: base + share * (wet - base) },
         direction: { x: -out * Math.sign(bank.rate || 1), z: 0 },
       })
     items.push(label(context, side, `${bank.name ?? 'Inflow'} ${say(bank.rate, 'flow')}`, x, ground))

@@ -38,15 +38,33 @@ export function composeMarks({ section, solution, items, say, left, right }: Con
         id: `${seen.id}-text`,
         role: 'text',
         at: { x, z: Math.max(top, seen.head) },
-        shift: { dx: 0.8, dy: -1 },
+        shift: { dx: 0, dy: -1 },
         text: `${seen.name ?? seen.id}`,
         size: 2.5,
         weight: 500,
-        anchor: 'start',
+        anchor: 'middle',
         base: 'bottom',
         priority: 5,
       },
     )
+    const misfit = solution.status === 'solved' ? solution.misfits.find(({ id }) => id === seen.id) : undefined
+    if (misfit)
+      items.push({
+        ...common,
+        of,
+        kind: 'text',
+        id: `${seen.id}-residual`,
+        role: 'text-soft',
+        at: { x, z: seen.head },
+        shift: { dx: 1.9, dy: 0 },
+        // What was read, and how far the answer lies above or below it.
+        text: `${say(seen.head, 'elevation', false)} (${misfit.computed >= misfit.observed ? '+' : '−'}${say(Math.abs(misfit.computed - misfit.observed), 'elevation', false)})`,
+        size: 1.8,
+        weight: 400,
+        anchor: 'start',
+        base: 'middle',
+        priority: 2,
+      })
   }
   for (const limit of section.limits) {
     const of = `limits.${limit.id}`
@@ -59,6 +77,19 @@ export function composeMarks({ section, solution, items, say, left, right }: Con
       { x: limit.to, z: limit.level - limit.clearance },
       { x: limit.from, z: limit.level - limit.clearance },
     ]
+    if (!broken && limit.clearance > 0)
+      items.push({
+        ...common,
+        of,
+        kind: 'path',
+        id: `${limit.id}-clear`,
+        role: 'limit-clear',
+        points: [
+          { x: limit.from, z: limit.level - limit.clearance },
+          { x: limit.to, z: limit.level - limit.clearance },
+        ],
+        closed: false,
+      })
     if (broken && limit.clearance > 0)
       items.push({
         ...common,
@@ -79,7 +110,18 @@ export function composeMarks({ section, solution, items, say, left, right }: Con
       closed: false,
       label: limit.name ?? 'Limit',
     })
-    const mark = !check ? '' : broken ? '✕ ' : '✓ '
+    // Sign beside colour: a tick or a cross at the left end of the line.
+    if (check)
+      items.push({
+        ...common,
+        of,
+        kind: 'symbol',
+        symbol: broken ? 'broken' : 'holds',
+        id: `${limit.id}-sign`,
+        role,
+        at: { x: limit.from, z: limit.level },
+        shift: { dx: -2.2, dy: 0 },
+      })
     items.push({
       ...common,
       of,
@@ -88,7 +130,7 @@ export function composeMarks({ section, solution, items, say, left, right }: Con
       role: broken ? 'text-trouble' : 'text',
       at: { x: (limit.from + limit.to) / 2, z: limit.level },
       shift: { dx: 0, dy: -0.9 },
-      text: `${mark}${limit.name ?? 'Limit'} ${say(limit.level, 'elevation', false)}${limit.clearance > 0 ? ` · needs ${say(limit.clearance, 'length')}` : ''}`,
+      text: `${limit.name ?? 'Limit'} ${say(limit.level, 'elevation', false)}${limit.clearance > 0 ? ` · needs ${say(limit.clearance, 'length')}` : ''}`,
       size: 2.5,
       weight: 500,
       anchor: 'middle',

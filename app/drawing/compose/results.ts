@@ -18,9 +18,14 @@ export function composeResults({ section, solution, items, samples, view, say, z
       })
   if (view.arrows !== false) {
     const field = arrows(solution, { columns: 12, rows: 3 })
+    // Next to a sink the speed has no bound: what is usual, not the extreme, gives an arrow its full length.
+    const speeds = field.arrows.map(({ vx, vz }) => Math.hypot(vx, vz)).sort((a, b) => a - b)
+    const usual = speeds[Math.floor(speeds.length * 0.9)] ?? 0
+    const clear = ((right - left) / 12) * 0.12
     for (const [i, arrow] of field.arrows.entries()) {
       const speed = Math.hypot(arrow.vx, arrow.vz)
-      if (!(speed > field.fastest * 0.004)) continue
+      if (!(speed > usual * 0.004)) continue
+      if (section.features.some(({ x }) => Math.abs(x - arrow.x) < clear)) continue
       items.push({
         ...common,
         kind: 'symbol',
@@ -30,7 +35,7 @@ export function composeResults({ section, solution, items, samples, view, say, z
         role: 'arrow',
         at: { x: arrow.x, z: arrow.z },
         direction: { x: arrow.vx, z: arrow.vz },
-        scale: Math.sqrt(speed / field.fastest),
+        scale: Math.sqrt(Math.min(1, speed / usual)),
       })
     }
   }
@@ -63,7 +68,7 @@ export function composeResults({ section, solution, items, samples, view, say, z
       role: 'text-divide',
       at: { x, z: divide.head + tall * 0.1 },
       shift: { dx: 0, dy: -0.8 },
-      text: `${divide.kind} at ${say(x - (section.left.x === left ? 0 : 0), 'distance')} · ${say(divide.head, 'elevation', false)}`,
+      text: `${divide.kind} at ${say(x, 'distance')} · ${say(divide.head, 'elevation', false)}`,
       size: 2.5,
       weight: 600,
       anchor:

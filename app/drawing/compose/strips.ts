@@ -17,7 +17,7 @@ export function composeStrips({ samples, items, units, left, right }: Context): 
       id: 'discharge',
       title: 'Discharge',
       unit: `${shapeOf('flow', units).unit} per ${units === 'us' ? 'foot' : 'metre'} of bank`,
-      range: { min: least - span * 0.12, max: most + span * 0.12 },
+      range: { min: least - span * 0.1, max: most + span * 0.34 },
       share: 0.19,
     },
     // Depth grows downwards, as it does in the ground: plotted as minus depth.

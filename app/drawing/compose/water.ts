@@ -5,7 +5,7 @@ const at = { panel: 'section', layer: 'water' } as const
 
 /** Saturated ground, the water table, what seeps and what is dry, and the straight line for comparison. */
 export function composeWater(context: Context): void {
-  const { solution, samples, items, left, right, clips } = context
+  const { solution, samples, items, left, right, clips, say } = context
   if (solution.status !== 'solved' || samples.length < 2) return
   const table: World[] = samples.map(({ x, head }) => ({ x, z: head }))
   const ring = [...table, ...[...samples].reverse().map(({ x, base }) => ({ x, z: base }))]
@@ -56,6 +56,22 @@ export function composeWater(context: Context): void {
       role: 'water-table',
       at: mid(line, reach.from, samples),
     })
+    items.push({
+      ...at,
+      layer: 'results',
+      kind: 'text',
+      id: `seepage-${i}-text`,
+      of: `result.seepage.${i}`,
+      role: 'text-water',
+      at: mid(line, reach.from, samples),
+      shift: { dx: 1, dy: -4.2 },
+      text: `seeps out ${say(reach.rate, 'flow')}`,
+      size: 2.5,
+      weight: 500,
+      anchor: 'start',
+      base: 'bottom',
+      priority: 5,
+    })
   }
   for (const [i, reach] of solution.dry.entries()) {
     const line = between(samples, reach.from, reach.to).map(({ x, base }) => ({ x, z: base }))
@@ -82,7 +98,7 @@ export function composeWater(context: Context): void {
     closed: false,
     label: 'Water table',
   })
-  const spot = samples[Math.floor(samples.length * 0.36)]
+  const spot = openSpot(context)
   if (spot)
     items.push({
       ...at,
@@ -102,4 +118,20 @@ function mid(line: World[], x: number, samples: Sample[]): World {
   if (found) return found
   const near = samples.reduce((best, next) => (Math.abs(next.x - x) < Math.abs(best.x - x) ? next : best))
   return { x: near.x, z: near.ground }
+}
+
+/** Where the mark of the water table stands clear of works, observations, limits and divides. */
+function openSpot({ section, solution, samples, left, right }: Context): Sample | undefined {
+  if (solution.status !== 'solved') return undefined
+  const busy = [
+    ...section.features.map(({ x }) => [x, x]),
+    ...section.observations.map(({ x }) => [x, x]),
+    ...section.limits.map(({ from, to }) => [from, to]),
+    ...solution.divides.map(({ from, to }) => [from, to]),
+    ...solution.seepage.map(({ from, to }) => [from, to]),
+  ] as [number, number][]
+  const room = (x: number) => Math.min(right - left, ...busy.map(([a, b]) => Math.max(a - x, x - b, 0)))
+  const tries = [0.36, 0.6, 0.25, 0.7, 0.48, 0.16, 0.82].map((part) => left + part * (right - left))
+  const x = tries.find((at) => room(at) > (right - left) * 0.06) ?? tries.reduce((a, b) => (room(b) > room(a) ? b : a))
+  return samples.reduce((best, next) => (Math.abs(next.x - x) < Math.abs(best.x - x) ? next : best))
 }

@@ -2,7 +2,7 @@ import type { Hatch } from '../scene'
 
 // The last noun names the soil ("silty sand" is a sand); words are looked for in this order.
 const WORDS: [RegExp, Hatch][] = [
-  [/peat|organic|mud/i, 'peat'],
+  [/\bpeat|\bmud\b|organic (soil|clay|silt)/i, 'peat'],
   [/\btill\b|boulder clay/i, 'till'],
   [/sandstone/i, 'sandstone'],
   [/limestone|chalk|dolomite/i, 'limestone'],

@@ -15,7 +15,10 @@ export type Device = {
 }
 
 // Even figures that people read off a title block; fine enough that the drawing fills its place.
-const STEPS = [1, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10, 12, 15, 20, 25, 30, 40, 50, 60, 80, 100, 150, 200, 300, 500, 1000]
+const STEPS = [
+  0.05, 0.1, 0.2, 0.5, 1, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10, 12, 15, 20, 25, 30, 40, 50, 60, 80, 100, 150, 200, 300, 500,
+  1000,
+]
 /** The largest usual exaggeration (1, 2, 5 …) not above the one that just fits. */
 export function neatExaggeration(fits: number): number {
   const found = [...STEPS].reverse().find((step) => step <= fits)

@@ -3,7 +3,8 @@ import type { Layer, Scene, TextItem } from '../scene'
 import type { Theme } from '../styles'
 import { FOOT_HEIGHT, footOf } from './foot'
 import { type Device, framesOf, type ShownView } from './frames'
-import { placeTexts, plotItem } from './items'
+import { plotItem } from './items'
+import { placeTexts } from './labels'
 import { deviceX, deviceY, fixed, pathOf } from './path'
 import { rulers } from './rulers'
 
@@ -83,7 +84,7 @@ export function layout(scene: Scene, viewport: Viewport, theme: Theme): PlotList
     }
   }
   plots.push(...around.over)
-  if (ruled) plots.push(...placeTexts(texts, frames, device, theme))
+  if (ruled) plots.push(...placeTexts(texts, scene.items, frames, device, theme))
   if (foot) plots.push(...footOf(scene, device, theme, { scale, exaggeration }))
   return { width, height, plots, frames, scale, exaggeration, theme }
 }

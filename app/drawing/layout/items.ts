@@ -1,15 +1,11 @@
 import { getStroke } from 'perfect-freehand'
-import { fitText, textWidth } from '../fonts/measure'
 import { hatchMarks } from '../hatch/marks'
-import type { PanelFrame, Plot, PlotText, Rect } from '../plot'
+import type { PanelFrame, Plot, Rect } from '../plot'
 import type { Item, TextItem } from '../scene'
 import { inkOf, palette, type Theme } from '../styles'
 import type { Device } from './frames'
 import { deviceX, deviceY, fixed, pathOf, ticksOf } from './path'
 import { drawSymbol } from './symbols'
-
-/** Text heights in mm by the classes of the scene. */
-export const TEXT_SIZE = { 1.8: 2.65, 2.5: 3.05, 3.5: 3.5, 5: 4.6 } as const
 
 /** One item of the scene in device units. Text is placed apart, when all of it is known. */
 export function plotItem(item: Exclude<Item, TextItem>, frame: PanelFrame, device: Device, theme: Theme): Plot[] {
@@ -124,68 +120,4 @@ function seen(points: { x: number; y: number }[], box: Rect): Rect | null {
   const width = Math.min(x1, box.x + box.width) - x
   const height = Math.min(y1, box.y + box.height) - y
   return width > 0 && height > 0 ? { x, y, width, height } : null
-}
-
-/**
- * Places texts by their priority: inside the panel, clear of those already placed; a text that finds no room a few line heights
- * up or down is left out rather than drawn over another.
- */
-export function placeTexts(items: TextItem[], frames: PanelFrame[], device: Device, theme: Theme): Plot[] {
-  const u = device.unit
-  const taken: Rect[] = []
-  const plots: PlotText[] = []
-  const halo = palette(theme).sheet
-  for (const item of [...items].sort((a, b) => b.priority - a.priority || (a.id < b.id ? -1 : 1))) {
-    const frame = frames.find(({ id }) => id === item.panel)
-    if (!frame) continue
-    const { box } = frame
-    const size = TEXT_SIZE[item.size] * u
-    const anchorX = deviceX(frame, item.at.x)
-    const anchorY = deviceY(frame, item.at.z)
-    // What hangs on something out of sight is out of sight.
-    if (
-      anchorX < box.x - 2 ||
-      anchorX > box.x + box.width + 2 ||
-      anchorY < box.y - 2 ||
-      anchorY > box.y + box.height + 2
-    )
-      continue
-    const text = fitText(item.text, box.width * 0.6, size, item.weight)
-    const width = textWidth(text, size, item.weight)
-    const at = anchorX + (item.shift?.dx ?? 0) * u
-    const left = item.anchor === 'start' ? at : item.anchor === 'end' ? at - width : at - width / 2
-    const x = Math.min(Math.max(left, box.x + 0.6 * u), box.x + box.width - width - 0.6 * u)
-    const up =
-      anchorY + (item.shift?.dy ?? 0) * u - (item.base === 'bottom' ? size : item.base === 'middle' ? size / 2 : 0)
-    const free = (y: number) =>
-      y >= box.y &&
-      y + size <= box.y + box.height &&
-      taken.every(
-        (other) =>
-          x + width + u < other.x || x > other.x + other.width + u || y + size < other.y || y > other.y + other.height,
-      )
-    const y = [0, -1.15, 1.15, -2.3, 2.3, -3.45].map((lines) => up + lines * size).find(free)
-    if (y === undefined) continue
-    taken.push({ x, y, width, height: size })
-    plots.push({
-      kind: 'text',
-      id: item.id,
-      of: item.of,
-      role: item.role,
-      layer: item.layer,
-      x,
-      y: y + size * 0.8,
-      text,
-      size,
-      weight: item.weight,
-      family: 'sans',
-      anchor: 'start',
-      fill: inkOf(item.role, theme, u).fill ?? palette(theme).ink,
-      halo: 0.7 * u,
-      haloColour: halo,
-    })
-  }
-  // Painted in the order of the scene, so that lists compare.
-  const order = new Map(items.map(({ id }, i) => [id, i]))
-  return plots.sort((a, b) => (order.get(a.id) ?? 0) - (order.get(b.id) ?? 0))
 }

@@ -10,7 +10,7 @@ const EXPLAINED: [Role, string, 'line' | 'fill'][] = [
   ['water-table', 'Water table (Dupuit)', 'line'],
   ['saturated', 'Saturated ground', 'fill'],
   ['open-water', 'Open water', 'fill'],
-  ['base', 'Base, taken as impermeable', 'line'],
+  ['base', 'Base, impermeable', 'line'],
   ['straight-line', 'Straight line between banks', 'line'],
   ['divide', 'Divide or trough', 'line'],
   ['flow-line', 'Flow line, equal tubes', 'line'],
@@ -19,6 +19,7 @@ const EXPLAINED: [Role, string, 'line' | 'fill'][] = [
   ['dry', 'Dry reach', 'line'],
   ['perched', 'Bed of a bank', 'line'],
   ['limit-holds', 'Limit kept', 'line'],
+  ['limit-clear', 'Clearance below a limit', 'line'],
   ['limit-broken', 'Limit broken', 'line'],
   ['wall', 'Cut-off wall', 'line'],
   ['recharge-loss', 'Loss by evaporation', 'line'],
@@ -41,7 +42,7 @@ export function legendOf(scene: Scene, box: Rect, unit: number, theme: Theme): P
   const size = 2.3 * u
   const rows = Math.max(1, Math.floor(box.height / row))
   const entries = legendEntries(scene)
-  const columns = Math.max(1, Math.min(Math.ceil(entries.length / rows), Math.floor(box.width / (36 * u))))
+  const columns = Math.max(1, Math.min(Math.ceil(entries.length / rows), Math.floor(box.width / (38 * u))))
   const wide = box.width / columns
   const plots: Plot[] = []
   for (const [i, entry] of entries.slice(0, rows * columns).entries()) {

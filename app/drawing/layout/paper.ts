@@ -19,7 +19,7 @@ export const PAPERS: Record<Paper, { width: number; height: number }> = {
 }
 /** Border after ISO 5457: 20 mm to file by on the left, 10 mm elsewhere. */
 const EDGE = { left: 20, other: 10 }
-const BAND = 32
+const BAND = 38
 
 /** The first scale of ISO 5455 (1, 2 or 5 times a power of ten) at which `metres` fit into `mm` of paper. */
 export function scaleFor(metres: number, mm: number): number {
@@ -61,7 +61,7 @@ export function layoutPaper(scene: Scene, options: PaperOptions, theme: Theme): 
   const view = { x0: xMid - half, x1: xMid + half, zMid: (range.min + range.max) / 2, exaggeration }
   const list = layout(scene, { ...viewport, view, scale }, theme)
   const top = edge.y + edge.height - BAND
-  const block = Math.min(150, edge.width * 0.5)
+  const block = Math.min(150, edge.width * 0.46)
   const right = edge.x + edge.width
   const pen = inkOf('frame', theme, 1)
   const line = (id: string, d: string, ink = pen): Plot => ({
@@ -82,7 +82,7 @@ export function layoutPaper(scene: Scene, options: PaperOptions, theme: Theme): 
     d: `M0 0H${fixed(width)}V${fixed(height)}H0Z`,
     ink: { fill: palette(theme).sheet },
   }
-  const left: Rect = { x: edge.x + 3, y: top + 9.5, width: edge.width - block - 6, height: BAND - 15 }
+  const left: Rect = { x: edge.x + 3, y: top + 9.2, width: edge.width - block - 6, height: BAND - 14 }
   const around: Plot[] = [
     line('border', `M${edge.x} ${edge.y}H${fixed(right)}V${fixed(edge.y + edge.height)}H${edge.x}Z`, {
       ...pen,
@@ -186,7 +186,7 @@ function titleBlock(scene: Scene, box: Rect, paper: Paper, scale: number, exagge
   const none = '–'
   const rows: { height: number; cells: Cell[] }[] = [
     {
-      height: 11,
+      height: 12.5,
       cells: [
         {
           id: 'title',
@@ -200,7 +200,7 @@ function titleBlock(scene: Scene, box: Rect, paper: Paper, scale: number, exagge
       ],
     },
     {
-      height: 7,
+      height: 8.5,
       cells: [
         { id: 'datum', label: 'Levels', value: title.datum || none, share: 0.4 },
         {
@@ -213,7 +213,7 @@ function titleBlock(scene: Scene, box: Rect, paper: Paper, scale: number, exagge
       ],
     },
     {
-      height: 7,
+      height: 8.5,
       cells: [
         { id: 'prepared', label: 'Prepared', value: title.prepared || none, share: 0.33 },
         { id: 'checked', label: 'Checked', value: title.checked || none, share: 0.33 },
@@ -221,7 +221,7 @@ function titleBlock(scene: Scene, box: Rect, paper: Paper, scale: number, exagge
       ],
     },
     {
-      height: 7,
+      height: 8.5,
       cells: [
         { id: 'number', label: 'Number', value: title.number || none, share: 0.4 },
         { id: 'revision', label: 'Revision', value: title.revision, share: 0.4, weight: 600 },

@@ -62,6 +62,10 @@ export function drawSymbol(
         face: `M${p(0, -2)}L${p(2, 1.5)}L${p(-2, 1.5)}Z`,
         line: `M${p(0, -0.8)}L${p(0, 0.5)}M${p(0, 0.95)}L${p(0, 1.05)}`,
       }
+    case 'holds':
+      return { line: `M${p(-0.9, 0)}L${p(-0.25, 0.75)}L${p(1, -0.95)}` }
+    case 'broken':
+      return { line: `M${p(-0.8, -0.8)}L${p(0.8, 0.8)}M${p(-0.8, 0.8)}L${p(0.8, -0.8)}` }
     default:
       return symbol satisfies never
   }
