@@ -1,5 +1,5 @@
 import { Link } from 'react-router'
-import { BrandMark } from './brand'
+import { Brand } from '~/ui/brand'
 import { CaseTabs } from './case-tabs'
 import { DownloadMenu } from './download-menu'
 import { MoreMenu } from './more-menu'
@@ -20,12 +20,12 @@ export function TopBar({ surround, onRetry, shut }: { surround: Surround; onRetr
       <div className="whereabouts">
         {token ? (
           <span className="brand">
-            <BrandMark />
+            <Brand />
             <span className="brand-name">Doab</span>
           </span>
         ) : (
           <Link to="/home" className="brand" aria-label="Doab, to the sections of the practice">
-            <BrandMark />
+            <Brand />
             <span className="brand-name">Doab</span>
           </Link>
         )}
