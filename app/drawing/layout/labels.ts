@@ -93,14 +93,14 @@ function groundOf(items: readonly Item[], frames: readonly PanelFrame[], device:
       ground.box(
         deviceX(frame, item.at.x) + (item.shift?.dx ?? 0) * u,
         deviceY(frame, item.at.z) + (item.shift?.dy ?? 0) * u + (item.symbol.endsWith('-arrow') ? 2.2 * u : 0),
-        1.4 * u,
+        (item.symbol === 'holds' || item.symbol === 'broken' ? 0.6 : 1.4) * u,
         cost,
       )
   }
   return ground
 }
 
-const UP_DOWN = [0, -1.2, 1.2, -2.4, 2.4, -3.6, 3.6, -4.8, 4.8]
+const UP_DOWN = [0, -1.2, 1.2, -2.4, 2.4, -3.6, 3.6]
 const ASIDE = [0, -0.35, 0.35, -0.75, 0.75, -1.1, 1.1]
 
 /**
@@ -139,7 +139,7 @@ export function placeTexts(
     let best: { rect: Rect; cost: number } | null = null
     for (const lines of UP_DOWN)
       for (const part of ASIDE) {
-        const far = Math.abs(lines) * 2.2 + Math.abs(part) * Math.min(width / u, 30) * 0.16
+        const far = Math.abs(lines) * 5 + Math.abs(part) * Math.min(width / u, 30) * 0.6
         if (best && far >= best.cost) continue
         const wanted = left + part * width
         const x = Math.min(Math.max(wanted, box.x + 0.6 * u), box.x + box.width - width - 0.6 * u)
