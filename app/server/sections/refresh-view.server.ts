@@ -1,4 +1,4 @@
-import { eq, inArray, sql } from 'drizzle-orm'
+import { and, eq, inArray, lt, lte, ne, not, or, sql } from 'drizzle-orm'
 import { thumbnailSvg } from '~/export'
 import { solveSteady } from '~/solver'
 import type { Executor } from '../../../drizzle/client'
@@ -27,13 +27,29 @@ export async function refreshView(db: Executor, sectionId: string, stored: Store
   const solution = solveSteady(document)
   const thumbnail = drawn('thumbnail', () => thumbnailSvg(document, solution))
   const readings = readingsOf(solution)
-  const at = new Date()
+  const view = { epoch, seq, document, thumbnail, readings, at: new Date() }
   await db
     .insert(sectionView)
-    .values({ sectionId, epoch, seq, document, thumbnail, readings, at })
-    .onDuplicateKeyUpdate({ set: { epoch, seq, document, thumbnail, readings, at } })
+    .ignore()
+    .values({ sectionId, ...view })
+  await db
+    .update(sectionView)
+    .set(view)
+    .where(
+      and(
+        eq(sectionView.sectionId, sectionId),
+        or(lt(sectionView.epoch, epoch), and(eq(sectionView.epoch, epoch), lte(sectionView.seq, seq))),
+      ),
+    )
   const title = document.title.trim().slice(0, 200)
-  if (title) await db.update(section).set({ title }).where(eq(section.id, sectionId))
+  // Whoever drew on since has the newer title.
+  const newer = sql`exists (select 1 from section_update u
+    where u.section_id = ${sectionId} and u.epoch = ${epoch} and u.seq > ${seq})`
+  if (title)
+    await db
+      .update(section)
+      .set({ title })
+      .where(and(eq(section.id, sectionId), eq(section.epoch, epoch), ne(section.title, title), not(newer)))
   return { ...readings, thumbnail }
 }
 
