@@ -12,6 +12,15 @@ export default [
     route('sign-out', 'routes/_account/sign-out.tsx'),
   ]),
 
+  layout('routes/_practice/layout.tsx', [
+    route('home', 'routes/_practice/home.tsx'),
+    route('sites', 'routes/_practice/sites.tsx'),
+    route('sites/new', 'routes/_practice/new-site.tsx'),
+    route('sites/:siteId', 'routes/_practice/site.tsx'),
+    route('sites/:siteId/edit', 'routes/_practice/edit-site.tsx'),
+    route('sites/:siteId/sections/new', 'routes/_practice/new-section.tsx'),
+    route('sections/:sectionId/links', 'routes/_practice/links.tsx'),
+  ]),
   route('sections/:sectionId', 'routes/_practice/section.tsx'),
 
   route('s/:token', 'routes/s.$token.tsx'),

@@ -1,5 +1,17 @@
-import odex from 'odex'
+import { createRequire } from 'node:module'
 import type { Section } from '~/section'
+
+/** The parts of odex (Hairer and Wanner's extrapolation code) used here; the package ships only its own source, not types. */
+type Integrator = {
+  absoluteTolerance: number
+  relativeTolerance: number
+  maxSteps: number
+  initialStepSize: number
+  denseOutput: boolean
+  solve(f: (x: number, y: number[]) => number[], x: number, y: number[], xEnd: number): { y: number[]; outcome: number }
+}
+// By require: an import would pull the package's TypeScript source into our type check.
+const { Solver } = createRequire(import.meta.url)('odex') as { Solver: new (n: number) => Integrator }
 
 /**
  * A second opinion that shares nothing with the solver: the section's own lines and outlines are read point by point, and
@@ -69,7 +81,7 @@ function shoot(section: Section, stops: number[], head: number, flow: number) {
     const w = gainAt(section, (xa + xb) / 2)
     const start = q
     let dry = false
-    const solver = new odex.Solver(1)
+    const solver = new Solver(1)
     solver.absoluteTolerance = 1e-8
     solver.relativeTolerance = 1e-8
     solver.initialStepSize = (xb - xa) / 20
