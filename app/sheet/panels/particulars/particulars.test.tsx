@@ -1,6 +1,7 @@
 import { act, screen, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
-import { describe, expect, it } from 'vitest'
+import { beforeAll, describe, expect, it } from 'vitest'
+import { loadUnits } from '~/section'
 import { fakeSheet, LIVE, show } from '../../shell/testing/fake-sheet'
 import { Particulars } from './particulars'
 
@@ -9,6 +10,11 @@ const type = async (label: string, text: string) => {
   await userEvent.clear(field)
   await userEvent.type(field, `${text}{Enter}`)
 }
+
+// The parser of units is a file of its own and takes a moment to come; what is tested here is not how long.
+beforeAll(async () => {
+  await loadUnits()
+}, 30_000)
 
 describe('particulars', () => {
   it('write a typed value to its path, in metres and days', async () => {

@@ -1,10 +1,16 @@
 import { screen, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
-import { describe, expect, it } from 'vitest'
+import { beforeAll, describe, expect, it } from 'vitest'
+import { loadUnits } from '~/section'
 import { fakeSheet, STRIP, show } from '../../shell/testing/fake-sheet'
 import { LIMIT_SPECS } from '../fields/specs'
 import { ObjectTable } from './object-table'
 import { VertexTable } from './vertex-table'
+
+// The parser of units is a file of its own and takes a moment to come; what is tested here is not how long.
+beforeAll(async () => {
+  await loadUnits()
+}, 30_000)
 
 describe('the table view', () => {
   it('names every cell for a screen reader and writes what is typed in it', async () => {
