@@ -2,7 +2,17 @@ import type { ReactNode } from 'react'
 import { Form, Link, useSearchParams } from 'react-router'
 
 /** A column's head as a link that sorts by it, or turns the order round. */
-export function SortHead({ by, first, children }: { by: string; first?: boolean; children: ReactNode }) {
+export function SortHead({
+  by,
+  first,
+  number,
+  children,
+}: {
+  by: string
+  first?: boolean
+  number?: boolean
+  children: ReactNode
+}) {
   const [params] = useSearchParams()
   const now = params.get('sort') ?? (first ? by : '')
   const down = params.get('order') === 'down'
@@ -11,7 +21,11 @@ export function SortHead({ by, first, children }: { by: string; first?: boolean;
   next.set('order', now === by && !down ? 'down' : 'up')
   next.delete('page')
   return (
-    <th scope="col" aria-sort={now === by ? (down ? 'descending' : 'ascending') : 'none'}>
+    <th
+      scope="col"
+      className={number ? 'num' : undefined}
+      aria-sort={now === by ? (down ? 'descending' : 'ascending') : undefined}
+    >
       <Link to={`?${next}`} preventScrollReset className="ui-sort">
         {children}
         <span aria-hidden="true">{now === by ? (down ? ' ↓' : ' ↑') : ''}</span>

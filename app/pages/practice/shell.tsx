@@ -82,5 +82,10 @@ export function PageHead({
   )
 }
 
-/** A day and hour as people in an office write it; the same on server and page. */
-export const day = (date: Date | string) => new Date(date).toISOString().slice(0, 16).replace('T', ' ')
+const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
+
+/** A day and hour as people in an office write it, in UTC: the same on server and page. */
+export function day(given: Date | string): string {
+  const date = new Date(given)
+  return `${date.getUTCDate()} ${MONTHS[date.getUTCMonth()]} ${date.getUTCFullYear()}, ${date.toISOString().slice(11, 16)}`
+}

@@ -99,11 +99,17 @@ export default function Links({ loaderData: { section, links, makes, revokes }, 
         <div className="ui-row">
           <h2>Links of this section</h2>
           {revokes && live > 1 ? (
-            <Form method="post">
-              <button type="submit" name="intent" value="revoke-all" className="ui-button ui-quiet">
-                Revoke all {live}
-              </button>
-            </Form>
+            <details className="ui-more">
+              <summary className="ui-button ui-quiet">Revoke all {live} …</summary>
+              <div>
+                <p>Every link of this section ends at once, on open sheets too.</p>
+                <Form method="post">
+                  <button type="submit" name="intent" value="revoke-all" className="ui-button ui-danger">
+                    Revoke all {live}
+                  </button>
+                </Form>
+              </div>
+            </details>
           ) : null}
         </div>
         {links.length === 0 ? (
@@ -143,16 +149,30 @@ export default function Links({ loaderData: { section, links, makes, revokes }, 
                           ? day(row.expiresAt)
                           : 'when revoked'}
                     </td>
-                    <td className="ui-small">{row.lastUsedAt ? day(row.lastUsedAt) : 'never'}</td>
-                    <td className="num">{row.uses}</td>
+                    <td className="ui-small" data-label="Last used">
+                      {row.lastUsedAt ? day(row.lastUsedAt) : 'never'}
+                    </td>
+                    <td className="num" data-label="Uses">
+                      {row.uses}
+                    </td>
                     <td>
                       {revokes && row.state === 'live' ? (
-                        <Form method="post">
-                          <input type="hidden" name="link" value={row.id} />
-                          <button type="submit" name="intent" value="revoke" className="ui-button ui-quiet">
-                            Revoke
-                          </button>
-                        </Form>
+                        <details className="ui-more">
+                          <summary className="ui-button ui-quiet" aria-label={`Revoke ${row.label} …`}>
+                            Revoke …
+                          </summary>
+                          <div>
+                            <p>
+                              The link ends at once, on sheets that are open by it too. It cannot be taken up again.
+                            </p>
+                            <Form method="post">
+                              <input type="hidden" name="link" value={row.id} />
+                              <button type="submit" name="intent" value="revoke" className="ui-button ui-danger">
+                                Revoke
+                              </button>
+                            </Form>
+                          </div>
+                        </details>
                       ) : null}
                     </td>
                   </tr>

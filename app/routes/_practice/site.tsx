@@ -117,7 +117,7 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
                   Section
                 </SortHead>
                 <th scope="col" className="num">
-                  Highest
+                  Water table, highest
                 </th>
                 <th scope="col" className="num">
                   To left bank
@@ -142,10 +142,12 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
                       <strong>{row.title}</strong>
                     </Link>
                   </td>
-                  <td className="num">{row.highest === null ? '–' : formatQuantity(row.highest, 'elevation', 'si')}</td>
-                  <td className="num">{row.toLeft === null ? '–' : formatQuantity(row.toLeft, 'flow', 'si')}</td>
-                  <td className="num">{row.toRight === null ? '–' : formatQuantity(row.toRight, 'flow', 'si')}</td>
-                  <td className="ui-small">
+                  <td className="num" data-label="Highest">
+                    {row.highest === null ? '–' : formatQuantity(row.highest, 'elevation', 'si')}
+                  </td>
+                  <Flow label="To left bank" rate={row.toLeft} />
+                  <Flow label="To right bank" rate={row.toRight} />
+                  <td className="ui-small" data-label="Changed">
                     {day(row.updatedAt)}
                     {row.updatedBy ? (
                       <>
@@ -157,7 +159,9 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
                   <td>
                     {may('section.rename') || may('section.archive') ? (
                       <details className="ui-more">
-                        <summary className="ui-button ui-quiet">Change</summary>
+                        <summary className="ui-button ui-quiet" aria-label={`Change ${row.title}`}>
+                          Change
+                        </summary>
                         <div>
                           {may('section.rename') && !row.archived ? (
                             <Form method="post" className="ui-row">
@@ -202,19 +206,44 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
         </div>
       )}
       <Pages pages={pages} />
-      {may('site.archive') ? (
-        <Form method="post">
-          <button
-            type="submit"
-            name="intent"
-            value={site.archived ? 'restore-site' : 'archive-site'}
-            className="ui-button ui-quiet"
-          >
-            {site.archived ? 'Restore this site' : 'Archive this site'}
-          </button>
-          <span className="ui-small"> {site.archived ? '' : 'It can be restored; nothing is deleted.'}</span>
-        </Form>
+      {rows.some(({ toLeft, toRight }) => (toLeft ?? 0) < 0 || (toRight ?? 0) < 0) ? (
+        <p className="ui-small mt-3">Per metre of bank. A minus means that the water loses to the ground.</p>
       ) : null}
+      {may('site.archive') ? <PutAway archived={site.archived} /> : null}
     </>
+  )
+}
+
+function Flow({ label, rate }: { label: string; rate: number | null }) {
+  return (
+    <td className="num" data-label={label}>
+      {rate === null ? '–' : formatQuantity(rate, 'flow', 'si')}
+    </td>
+  )
+}
+
+/** Asks before a whole job is put away; taking it out again needs no asking. */
+function PutAway({ archived }: { archived: boolean }) {
+  if (archived)
+    return (
+      <Form method="post">
+        <button type="submit" name="intent" value="restore-site" className="ui-button">
+          Restore this site
+        </button>
+      </Form>
+    )
+  return (
+    <details className="ui-ask">
+      <summary className="ui-button ui-quiet">Archive this site …</summary>
+      <Form method="post">
+        <p>
+          Its sections can then be read but not drawn on; open sheets turn read-only. Nothing is deleted, and the site
+          can be restored.
+        </p>
+        <button type="submit" name="intent" value="archive-site" className="ui-button ui-danger">
+          Archive the site
+        </button>
+      </Form>
+    </details>
   )
 }

@@ -51,7 +51,9 @@ export default function Sites({ loaderData: { rows, total, pages, archived, sear
                 <SortHead by="number">Number</SortHead>
                 <th scope="col">Place</th>
                 <th scope="col">Client</th>
-                <SortHead by="sections">Sections</SortHead>
+                <SortHead by="sections" number>
+                  Sections
+                </SortHead>
                 <SortHead by="updated">Changed</SortHead>
               </tr>
             </thead>
@@ -64,11 +66,15 @@ export default function Sites({ loaderData: { rows, total, pages, archived, sear
                     </Link>
                     {row.shared ? <span className="ui-small"> · shared with you</span> : null}
                   </td>
-                  <td>{row.number}</td>
-                  <td>{row.place}</td>
-                  <td>{row.client}</td>
-                  <td className="num">{row.sections}</td>
-                  <td className="ui-small">{day(row.updatedAt)}</td>
+                  <td data-label="Number">{row.number || '–'}</td>
+                  <td data-label="Place">{row.place || '–'}</td>
+                  <td data-label="Client">{row.client || '–'}</td>
+                  <td className="num" data-label="Sections">
+                    {row.sections}
+                  </td>
+                  <td className="ui-small" data-label="Changed">
+                    {day(row.updatedAt)}
+                  </td>
                 </tr>
               ))}
             </tbody>
