@@ -12,6 +12,26 @@ export function hatchMarks(
   unit: number,
   origin: { x: number; y: number },
 ): { marks: string; dots: string } {
+  if (hatch === 'none') return { marks: '', dots: '' }
+  const key = `${hatch} ${unit} ${origin.x} ${origin.y} ${box.x} ${box.y} ${box.width} ${box.height}`
+  let made = kept.get(key)
+  if (!made) {
+    if (kept.size >= KEPT) kept.clear()
+    made = makeMarks(hatch, box, unit, origin)
+    kept.set(key, made)
+  }
+  return made
+}
+/** Hatches of the boxes drawn last: while something is dragged, nearly all stay as they are. */
+const kept = new Map<string, { marks: string; dots: string }>()
+const KEPT = 96
+
+function makeMarks(
+  hatch: Hatch,
+  box: Rect,
+  unit: number,
+  origin: { x: number; y: number },
+): { marks: string; dots: string } {
   const marks: string[] = []
   const dots: string[] = []
   const f = (value: number) => String(Math.round(value * 10) / 10)

@@ -42,6 +42,7 @@ export function plotItem(item: Exclude<Item, TextItem>, frame: PanelFrame, devic
       const box = seen(
         item.rings.flat().map(({ x, z }) => ({ x: deviceX(frame, x), y: deviceY(frame, z) })),
         frame.box,
+        u,
       )
       const origin = { x: frame.ax, y: frame.ay }
       const { marks, dots } = box ? hatchMarks(item.hatch, box, u, origin) : { marks: '', dots: '' }
@@ -102,7 +103,8 @@ const faceOf = (role: Item['role'], theme: Theme) => {
 }
 
 /** The part of a ring's box that can be seen, or null. */
-function seen(points: { x: number; y: number }[], box: Rect): Rect | null {
+function seen(points: { x: number; y: number }[], box: Rect, unit: number): Rect | null {
+  const coarse = 6 * unit
   let [x0, x1, y0, y1] = [
     Number.POSITIVE_INFINITY,
     Number.NEGATIVE_INFINITY,
@@ -119,5 +121,11 @@ function seen(points: { x: number; y: number }[], box: Rect): Rect | null {
   const y = Math.max(y0, box.y)
   const width = Math.min(x1, box.x + box.width) - x
   const height = Math.min(y1, box.y + box.height) - y
-  return width > 0 && height > 0 ? { x, y, width, height } : null
+  if (!(width > 0 && height > 0)) return null
+  // Rounded outwards, so that a small move leaves the same box and with it the same marks.
+  const left = Math.max(box.x, Math.floor(x / coarse) * coarse)
+  const top = Math.max(box.y, Math.floor(y / coarse) * coarse)
+  const right = Math.min(box.x + box.width, Math.ceil((x + width) / coarse) * coarse)
+  const bottom = Math.min(box.y + box.height, Math.ceil((y + height) / coarse) * coarse)
+  return { x: left, y: top, width: right - left, height: bottom - top }
 }
