@@ -92,15 +92,25 @@ export default function EditSite({ loaderData: { site, edits, shared }, actionDa
                       <td>
                         <strong>{guest.name}</strong> <span className="ui-small">{guest.email}</span>
                       </td>
-                      <td>{guest.role}</td>
-                      <td className="ui-small">since {day(guest.createdAt)}</td>
+                      <td data-label="May">{guest.role === 'editor' ? 'draw' : 'read'}</td>
+                      <td className="ui-small" data-label="Since">
+                        since {day(guest.createdAt)}
+                      </td>
                       <td>
-                        <Form method="post">
-                          <input type="hidden" name="user" value={guest.userId} />
-                          <button type="submit" name="intent" value="unshare" className="ui-button ui-quiet">
-                            Take back
-                          </button>
-                        </Form>
+                        <details className="ui-more">
+                          <summary className="ui-button ui-quiet" aria-label={`Take back from ${guest.name} …`}>
+                            Take back …
+                          </summary>
+                          <div>
+                            <p>{guest.name} sees this site no more, on sheets that are open too.</p>
+                            <Form method="post">
+                              <input type="hidden" name="user" value={guest.userId} />
+                              <button type="submit" name="intent" value="unshare" className="ui-button ui-danger">
+                                Take back
+                              </button>
+                            </Form>
+                          </div>
+                        </details>
                       </td>
                     </tr>
                   ))}
