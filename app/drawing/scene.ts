@@ -189,4 +189,6 @@ export type Scene = {
   title: TitleBlock
   caution: string
   legend: { role: Role; hatch?: Hatch; text: string }[]
+  /** Words of the legend that hang on the answer: what the longest arrow stands for. */
+  keys: Partial<Record<Role, string>>
 }

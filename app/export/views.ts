@@ -35,7 +35,14 @@ export function thumbnailSvg(
 ): string {
   const scene = compose(section, solution, { arrows: false, grid: false, strips: false, markup: false })
   const items = scene.items.filter(({ role, kind }) => SMALL.has(role) && kind !== 'text' && kind !== 'symbol')
-  const list = layout({ ...scene, items }, { width, height, unit: 1.6, foot: false, rulers: false }, theme)
+  // No labels, no recharge: the height goes to what is drawn.
+  const levels = items.flatMap((item) => (item.kind === 'path' ? item.points.map(({ z }) => z) : []))
+  const panels = scene.panels.map((panel) => {
+    const { min, max } = panel.range
+    const top = Math.min(max, Math.max(...levels))
+    return { ...panel, range: { min, max: top + (top - min) * 0.12 } }
+  })
+  const list = layout({ ...scene, items, panels }, { width, height, unit: 1.6, foot: false, rulers: false }, theme)
   const label = section.title || 'Section'
   return inline(
     list,

@@ -37,6 +37,7 @@ export type Context = {
   say(value: number, kind: QuantityKind, unit?: boolean): string
   items: Item[]
   clips: Scene['clips']
+  keys: Scene['keys']
 }
 
 const SAMPLES = 180
@@ -101,6 +102,7 @@ export function contextOf(section: Section, solution: Solution, view: ComposeVie
     say: (value, kind, unit = true) => formatQuantity(value, kind, units, { unit }),
     items: [],
     clips: [],
+    keys: {},
   }
 }
 

@@ -39,6 +39,7 @@ export function compose(section: Section, solution: Solution, view: ComposeView 
       ...strips,
     ],
     clips: context.clips,
+    keys: context.keys,
     units: context.units,
     grid: view.grid !== false,
     items: context.items,

@@ -2,8 +2,12 @@ import { arrows, flowLines } from '~/solver'
 import type { Context } from './context'
 
 /** Divide, flow arrows, flow lines, the highest point. */
-export function composeResults({ section, solution, items, samples, view, say, z, left, right }: Context): void {
-  if (solution.status !== 'solved') return
+export function composeResults(context: Context): void {
+  const { section, solution, items, samples, view, say, z, left, right } = context
+  if (solution.status !== 'solved') {
+    sayWhyNot(context, solution.reason[0]?.message ?? solution.mend)
+    return
+  }
   const common = { panel: 'section', layer: 'results' } as const
   if (view.flowLines)
     for (const [i, line] of flowLines(solution, { tubes: 10, stations: 120 }).entries())
@@ -21,6 +25,8 @@ export function composeResults({ section, solution, items, samples, view, say, z
     // Next to a sink the speed has no bound: what is usual, not the extreme, gives an arrow its full length.
     const speeds = field.arrows.map(({ vx, vz }) => Math.hypot(vx, vz)).sort((a, b) => a - b)
     const usual = speeds[Math.floor(speeds.length * 0.9)] ?? 0
+    if (usual > 0)
+      context.keys.arrow = `${field.measure === 'velocity' ? 'Seepage' : 'Darcy flux'}, longest ${say(usual, 'conductivity')}`
     const clear = ((right - left) / 12) * 0.12
     for (const [i, arrow] of field.arrows.entries()) {
       const speed = Math.hypot(arrow.vx, arrow.vz)
@@ -97,5 +103,33 @@ export function composeResults({ section, solution, items, samples, view, say, z
       anchor: 'middle',
       base: 'top',
       priority: 1,
+    })
+}
+
+/** No answer: the sheet says so where the water table would be, and why. */
+function sayWhyNot({ items, left, right, z }: Context, why: string): void {
+  const lines = ['']
+  for (const word of why.split(/\s+/)) {
+    const last = lines.length - 1
+    const longer = `${lines[last]} ${word}`.trim()
+    if (longer.length > 46 && lines[last]) lines.push(word)
+    else lines[last] = longer
+  }
+  for (const [i, text] of ['No steady answer', ...lines.slice(0, 4)].entries())
+    items.push({
+      kind: 'text',
+      id: `no-answer-${i}`,
+      of: 'result.none',
+      role: 'text-trouble',
+      layer: 'results',
+      panel: 'section',
+      at: { x: (left + right) / 2, z: z.min + (z.max - z.min) * 0.5 },
+      shift: { dx: 0, dy: i === 0 ? -6 : -6 + 1.4 + i * 4.2 },
+      text,
+      size: i === 0 ? 3.5 : 2.5,
+      weight: i === 0 ? 600 : 400,
+      anchor: 'middle',
+      base: 'middle',
+      priority: 10,
     })
 }

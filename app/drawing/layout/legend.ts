@@ -31,7 +31,9 @@ export function legendEntries(scene: Scene): Entry[] {
   const shown = new Set(scene.items.map(({ role }) => role))
   return [
     ...scene.legend.map(({ role, hatch, text }): Entry => ({ role, text, kind: 'hatch', hatch })),
-    ...EXPLAINED.filter(([role]) => shown.has(role)).map(([role, text, kind]): Entry => ({ role, text, kind })),
+    ...EXPLAINED.filter(([role]) => shown.has(role)).map(
+      ([role, text, kind]): Entry => ({ role, text: scene.keys[role] ?? text, kind }),
+    ),
   ]
 }
 
