@@ -125,6 +125,12 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
     // Device x = ax + bx·x, y = ay + by·z: for tests and for whoever puts something beside the drawing.
     const scales = `${panel.ax} ${panel.bx} ${panel.ay} ${panel.by}`
     if (element.dataset.scales !== scales) element.dataset.scales = scales
+    // What is drawn, to the last digit: two sheets of one section must agree in it.
+    const { solution, live } = sheet.get()
+    const answer = solution.status === 'solved' ? `${solution.highest.x} ${solution.highest.head}` : 'none'
+    if (element.dataset.answer !== answer) element.dataset.answer = answer
+    const marks = String(live.markup.marks.length)
+    if (element.dataset.marks !== marks) element.dataset.marks = marks
     const seen = seenIn(panel, list.exaggeration)
     if (same(seen, sheet.get().seen)) return
     sheet.set({ seen })

@@ -8,18 +8,20 @@ function recording() {
   const state: Record<string, unknown> = { globalAlpha: 1 }
   const ctx = new Proxy(state, {
     get: (_, name: string) =>
-      name in state
-        ? state[name]
-        : (...given: unknown[]) => {
-            const what = given.map((one) => (one instanceof FakePath ? one.d : String(one)))
-            const ink =
-              name === 'fill' || name === 'fillText'
-                ? ` ${state.fillStyle}`
-                : name === 'stroke'
-                  ? ` ${state.strokeStyle}`
-                  : ''
-            log.push(`${name}(${what.join(', ')})${ink}${state.globalAlpha === 1 ? '' : ` @${state.globalAlpha}`}`)
-          },
+      name === 'getTransform'
+        ? () => ({ a: 1 })
+        : name in state
+          ? state[name]
+          : (...given: unknown[]) => {
+              const what = given.map((one) => (one instanceof FakePath ? one.d : String(one)))
+              const ink =
+                name === 'fill' || name === 'fillText'
+                  ? ` ${state.fillStyle}`
+                  : name === 'stroke'
+                    ? ` ${state.strokeStyle}`
+                    : ''
+              log.push(`${name}(${what.join(', ')})${ink}${state.globalAlpha === 1 ? '' : ` @${state.globalAlpha}`}`)
+            },
     set: (_, name: string, value) => {
       state[name] = value
       return true

@@ -1,4 +1,5 @@
 import type { Ink, Plot, PlotHatch, PlotPath, PlotText } from '~/drawing'
+import { stampOf } from './hatch-cache'
 
 /**
  * The canvas painter: walks a plot list and does what it says. The konva layers hand it their drawing context; nothing here
@@ -79,7 +80,8 @@ function paintPath(ctx: CanvasRenderingContext2D, { d, ink, fillRule }: PlotPath
   ctx.globalAlpha = before
 }
 
-function paintHatch(ctx: CanvasRenderingContext2D, { clip, fill, ink, marks, dots }: PlotHatch) {
+function paintHatch(ctx: CanvasRenderingContext2D, plot: PlotHatch) {
+  const { clip, fill, ink, marks, dots } = plot
   const outline = pathOf(clip)
   const before = ctx.globalAlpha
   if (ink.opacity !== undefined) ctx.globalAlpha = before * ink.opacity
@@ -87,14 +89,20 @@ function paintHatch(ctx: CanvasRenderingContext2D, { clip, fill, ink, marks, dot
     ctx.fillStyle = fill
     ctx.fill(outline, 'evenodd')
   }
-  ctx.save()
-  ctx.clip(outline, 'evenodd')
-  if (marks) stroke(ctx, ink, pathOf(marks))
-  if (dots) {
-    ctx.fillStyle = ink.fill ?? ink.stroke ?? 'transparent'
-    ctx.fill(pathOf(dots))
+  if (marks || dots) {
+    const draw = (on: CanvasRenderingContext2D) => {
+      if (marks) stroke(on, ink, pathOf(marks))
+      if (!dots) return
+      on.fillStyle = ink.stroke ?? ink.fill ?? 'transparent'
+      on.fill(pathOf(dots))
+    }
+    ctx.save()
+    ctx.clip(outline, 'evenodd')
+    const stamp = stampOf(plot, ctx.getTransform().a, draw)
+    if (stamp) ctx.drawImage(stamp.image, stamp.x, stamp.y, stamp.width, stamp.height)
+    else draw(ctx)
+    ctx.restore()
   }
-  ctx.restore()
   ctx.globalAlpha = before
 }
 
