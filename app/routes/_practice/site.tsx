@@ -117,13 +117,19 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
                   Section
                 </SortHead>
                 <th scope="col" className="num">
-                  Water table, highest
+                  Highest
+                  <br />
+                  water table
                 </th>
                 <th scope="col" className="num">
-                  To left bank
+                  To left
+                  <br />
+                  bank
                 </th>
                 <th scope="col" className="num">
-                  To right bank
+                  To right
+                  <br />
+                  bank
                 </th>
                 <SortHead by="updated">Changed</SortHead>
                 <th scope="col">
