@@ -93,7 +93,10 @@ export function contextOf(section: Section, solution: Solution, view: ComposeVie
     view,
     units,
     x: { min: left - apron, max: right + apron },
-    z: { min: low - tall * 0.14, max: high + tall * (section.recharge.length > 0 ? 0.34 : 0.2) },
+    z: {
+      min: low - tall * 0.14,
+      max: high + tall * (section.recharge.length > 0 ? 0.22 + 0.14 * rowsOf(section) : 0.2),
+    },
     left,
     right,
     apron,
@@ -104,6 +107,12 @@ export function contextOf(section: Section, solution: Solution, view: ComposeVie
     clips: [],
     keys: {},
   }
+}
+
+/** Rows that overlapping recharge zones are drawn in, at most three. */
+function rowsOf({ recharge }: Section): number {
+  const over = (x: number) => recharge.filter(({ from, to }) => from <= x && x < to).length
+  return Math.min(3, Math.max(1, ...recharge.map(({ from }) => over(from))))
 }
 
 export const groundAt = (section: Section, x: number) => lineAt(section.ground, x)

@@ -1,5 +1,8 @@
 import type { Context } from './context'
 
+/** Height of one row of zones, as a share of the drawn height: room for arrows and a line of text. */
+const ROW = 0.105
+
 /** Recharge zones as brackets over the ground with arrows, down for gain and up for loss; stacked where zones overlap. */
 export function composeRecharge({ section, items, z, say, left, right }: Context): void {
   const tall = z.max - z.min
@@ -9,7 +12,7 @@ export function composeRecharge({ section, items, z, say, left, right }: Context
     let row = rows.findIndex((taken) => taken.every(({ to }) => to <= zone.from + 1e-9))
     if (row < 0) row = rows.push([]) - 1
     rows[row]?.push({ to: zone.to })
-    const level = z.max - tall * (0.085 + 0.07 * Math.min(row, 2))
+    const level = z.max - tall * (0.085 + ROW * Math.min(row, 2))
     const loss = zone.rate < 0
     const of = `recharge.${zone.id}`
     const role = loss ? 'recharge-loss' : 'recharge'

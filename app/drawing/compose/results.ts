@@ -26,7 +26,7 @@ export function composeResults(context: Context): void {
     const speeds = field.arrows.map(({ vx, vz }) => Math.hypot(vx, vz)).sort((a, b) => a - b)
     const usual = speeds[Math.floor(speeds.length * 0.9)] ?? 0
     if (usual > 0)
-      context.keys.arrow = `${field.measure === 'velocity' ? 'Seepage' : 'Darcy flux'}, longest ${say(usual, 'conductivity')}`
+      context.keys.arrow = `${field.measure === 'velocity' ? 'Seepage' : 'Darcy flux'}, longest ${say(Number(usual.toPrecision(2)), 'conductivity')}`
     const clear = ((right - left) / 12) * 0.12
     for (const [i, arrow] of field.arrows.entries()) {
       const speed = Math.hypot(arrow.vx, arrow.vz)
