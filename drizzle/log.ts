@@ -14,7 +14,7 @@ import { section, sectionSnapshot, sectionUpdate } from './schema'
 
 export type NewUpdate = { sectionId: string; epoch: number; update: Uint8Array; userId: string | null }
 /** What an append did for one section: `before` is the last seq that was stored before it (0: none; null: not asked). */
-export type Appended = { sectionId: string; before: number | null; last: number }
+export type Appended = { sectionId: string; before: number; last: number }
 
 /** The section is not there, or its epoch has moved on (an earlier version was restored); nothing was stored. */
 export class NotAppended extends Error {
@@ -44,18 +44,11 @@ export const KEEP_ROWS_DAYS = 180
  * Store updates of any number of sections in one transaction, in the order given.
  * @throws NotAppended when one of the sections is gone or has another epoch; then nothing at all is stored.
  */
-export async function appendUpdates(
-  db: Executor,
-  updates: NewUpdate[],
-  /** Also say what stood before; needed when other processes append to the same sections. */
-  options: { before: boolean } = { before: true },
-): Promise<Appended[]> {
+export async function appendUpdates(db: Executor, updates: NewUpdate[]): Promise<Appended[]> {
   if (updates.length === 0) return []
   const ids = [...new Set(updates.map((u) => u.sectionId))].sort()
-  if (!options.before) {
-    const last = await appendInOneTrip(db, updates)
-    if (last) return ids.map((id) => ({ sectionId: id, before: null, last: last.get(id) ?? 0 }))
-  }
+  const done = await appendInOneTrip(db, updates)
+  if (done) return ids.map((id) => ({ sectionId: id, before: done.before.get(id) ?? 0, last: done.last.get(id) ?? 0 }))
   return db.transaction(async (tx) => {
     // Locked in one order everywhere, so two sidecars cannot wait for each other.
     const locked = await tx
@@ -73,7 +66,7 @@ export async function appendUpdates(
     ]
     if (gone.length || stale.length) throw new NotAppended(gone, stale)
 
-    const before = new Map(options.before ? (await lastSeqs(tx, ids)).map((row) => [row.sectionId, row.seq]) : [])
+    const before = new Map((await lastSeqs(tx, ids)).map((row) => [row.sectionId, row.seq]))
     const [result] = await tx.insert(sectionUpdate).values(updates)
     const last = new Map<string, number>()
     // One insert of known length draws consecutive numbers (innodb_autoinc_lock_mode 0 and 1; MariaDB's default is 1).
@@ -82,7 +75,7 @@ export async function appendUpdates(
     })
     return ids.map((id) => ({
       sectionId: id,
-      before: options.before ? (before.get(id) ?? 0) : null,
+      before: before.get(id) ?? 0,
       last: last.get(id) ?? 0,
     }))
   })
@@ -91,9 +84,13 @@ export async function appendUpdates(
 /**
  * The same transaction as one statement of MariaDB's, so that a commit costs one trip instead of four: on a busy machine each
  * trip waits for two processes to be scheduled, and every edit waits for the commit before it is shown.
- * @returns the last seq of each section, or null when a section is gone or stale and nothing was stored.
+ * What stood before is read under the same lock: the app, too, writes rows (a new title), which an open room must notice.
+ * @returns first and last seq around each section's rows, or null when a section is gone or stale and nothing was stored.
  */
-async function appendInOneTrip(db: Executor, updates: NewUpdate[]): Promise<Map<string, number> | null> {
+async function appendInOneTrip(
+  db: Executor,
+  updates: NewUpdate[],
+): Promise<{ before: Map<string, number>; last: Map<string, number> } | null> {
   const sections = [...new Map(updates.map((u) => [`${u.sectionId} ${u.epoch}`, u])).values()]
   const wanted = sql.join(
     sections.map((u) => sql`(id = ${u.sectionId} and epoch = ${u.epoch})`),
@@ -109,6 +106,10 @@ async function appendInOneTrip(db: Executor, updates: NewUpdate[]): Promise<Map<
     start transaction;
     select count(*) into found from (select id from section where ${wanted} order by id for update) locked;
     if found = ${sections.length} then
+      select s.id as section_id, greatest(
+        coalesce((select max(u.seq) from section_update u where u.section_id = s.id and u.epoch = s.epoch), 0),
+        coalesce((select n.seq from section_snapshot n where n.section_id = s.id and n.epoch = s.epoch), 0)) as before_seq
+        from section s where ${wanted};
       insert into section_update (section_id, epoch, \`update\`, user_id) values ${rows};
       select last_insert_id() as first;
       commit;
@@ -118,7 +119,20 @@ async function appendInOneTrip(db: Executor, updates: NewUpdate[]): Promise<Map<
   end`)
   const first = firstOf(sets)
   if (first === null) return null
-  return new Map(updates.map((update, i) => [update.sectionId, first + i]))
+  return {
+    before: beforeOf(sets),
+    last: new Map(updates.map((update, i) => [update.sectionId, first + i])),
+  }
+}
+
+/** The seqs that stood before, from the result sets of `appendInOneTrip`. */
+function beforeOf(sets: unknown): Map<string, number> {
+  const before = new Map<string, number>()
+  for (const set of Array.isArray(sets) ? sets : [])
+    for (const row of Array.isArray(set) ? set : [set])
+      if (typeof row === 'object' && row !== null && 'before_seq' in row)
+        before.set(String(row.section_id), Number(row.before_seq))
+  return before
 }
 
 /** The one number in the result sets of `appendInOneTrip`. */

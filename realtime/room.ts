@@ -290,7 +290,7 @@ export class Room implements Source {
     this.waitingSince = this.waiting.some((item) => item.is === 'edit') ? Date.now() : null
     if (done) {
       // Somebody else's rows between what we know and ours: we still know only the former.
-      if (done.before === null || done.before === this.known) this.known = done.last
+      if (done.before === this.known) this.known = done.last
       else this.around.behind(this)
       this.rowsSinceFold += edits.length
       this.changedSinceVersion = true

@@ -21,8 +21,6 @@ type Options = {
   db: Db['db']
   limits: Limits
   log: Log
-  /** Other sidecars append to the same sections. */
-  shared: boolean
   /** Somebody sent what can only have been made to do harm. */
   onHostile(holder: string): void
   onStored(sectionId: string, seq: number): void
@@ -46,7 +44,7 @@ export class Rooms {
 
   constructor(private readonly options: Options) {
     this.writer = new Writer({
-      append: (updates) => appendUpdates(options.db, updates, { before: options.shared }),
+      append: (updates) => appendUpdates(options.db, updates),
       lanes: 4,
       log: options.log,
     })

@@ -71,7 +71,6 @@ export function create(deps: Deps): Sidecar {
     db,
     limits,
     log,
-    shared: Boolean(deps.redisUrl),
     onHostile: (holder) => banned.set(holder, Date.now() + limits.banned),
     onStored: (sectionId, seq) => peers.stored(sectionId, seq),
     onPresence: (sectionId, entries) => peers.presence(sectionId, entries),

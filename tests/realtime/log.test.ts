@@ -68,14 +68,10 @@ describe('the update log', () => {
     await expect(append).rejects.toBeInstanceOf(NotAppended)
     expect(await contents(one)).toEqual({})
     // The sidecar's way in one trip keeps to the same.
-    const inOne = appendUpdates(
-      db,
-      [
-        { sectionId: one, epoch: 1, update, userId: null },
-        { sectionId: two, epoch: 1, update, userId: null },
-      ],
-      { before: false },
-    )
+    const inOne = appendUpdates(db, [
+      { sectionId: one, epoch: 1, update, userId: null },
+      { sectionId: two, epoch: 1, update, userId: null },
+    ])
     await expect(inOne).rejects.toMatchObject({ stale: [two], gone: [] })
     expect(await contents(one)).toEqual({})
   })
@@ -85,21 +81,29 @@ describe('the update log', () => {
     const { userId } = practice.principal
     const write = pen()
     const odd = write('odd', '\\\'" \u0000 % ? `')
-    const done = await appendUpdates(
-      db,
-      [
-        { sectionId: one, epoch: 1, update: write('a', 1), userId },
-        { sectionId: two, epoch: 1, update: pen()('b', 2), userId: null },
-        { sectionId: one, epoch: 1, update: odd, userId },
-      ],
-      { before: false },
-    )
+    const done = await appendUpdates(db, [
+      { sectionId: one, epoch: 1, update: write('a', 1), userId },
+      { sectionId: two, epoch: 1, update: pen()('b', 2), userId: null },
+      { sectionId: one, epoch: 1, update: odd, userId },
+    ])
     const rows = await rowsOf(one)
     expect(rows.at(-1)?.seq).toBe(done.find((d) => d.sectionId === one)?.last)
     expect(Buffer.compare(rows.at(-1)?.update ?? new Uint8Array(), odd)).toBe(0)
     expect((await lastSeqs(db, [two]))[0]?.seq).toBe(done.find((d) => d.sectionId === two)?.last)
     expect(await contents(two)).toEqual({ b: 2 })
     expect(rows.map((row) => row.userId)).toEqual([null, userId, userId])
+  })
+
+  it('says what stood before, so that a room notices a row of somebody else’s', async () => {
+    const sectionId = await practice.section()
+    const write = pen()
+    const one = (value: number) => appendUpdates(db, [{ sectionId, epoch: 1, update: write('a', value), userId: null }])
+    const [first] = await one(1)
+    const [second] = await one(2)
+    expect(second?.before).toBe(first?.last)
+    await compact(db, sectionId, { keepDays: -1 })
+    const [third] = await one(3)
+    expect(third?.before).toBe(second?.last)
   })
 
   it('loses nothing when folding meets appending, whoever appends', async () => {
@@ -110,7 +114,7 @@ describe('the update log', () => {
       const write = pen()
       for (let i = 0; i < 60; i++) {
         const key = `w${w}.${i}`
-        await appendUpdates(db, [{ sectionId, epoch: 1, update: write(key, i), userId: null }], { before: w === 1 })
+        await appendUpdates(db, [{ sectionId, epoch: 1, update: write(key, i), userId: null }])
         expected[key] = i
       }
     })
