@@ -44,6 +44,8 @@ export default defineConfig({
         extends: true,
         test: {
           name: 'unit',
+          // Property tests take seconds, and longer where the machine is shared: a limit for what hangs, not for speed.
+          testTimeout: 120_000,
           environment: 'node',
           include: ['app/**/*.test.ts', 'realtime/**/*.test.ts', 'drizzle/**/*.test.ts', 'tests/architecture.test.ts'],
         },
@@ -52,6 +54,7 @@ export default defineConfig({
         extends: true,
         test: {
           name: 'dom',
+          testTimeout: 60_000,
           environment: 'jsdom',
           include: ['app/**/*.test.tsx'],
           setupFiles: ['tests/setup/dom.ts'],
