@@ -25,6 +25,7 @@ export default [
 
   route('s/:token', 'routes/s.$token.tsx'),
   route('api/sections/:sectionId/sheet.svg', 'routes/api/sections/sheet-svg.ts'),
+  route('api/sections/:sectionId/thumbnail.svg', 'routes/api/sections/thumbnail-svg.ts'),
   route('api/sections/:sectionId/profile.csv', 'routes/api/sections/profile-csv.ts'),
   route('api/sections/:sectionId/section.json', 'routes/api/sections/section-json.ts'),
 

@@ -12,6 +12,7 @@ import * as sites from '~/routes/_practice/sites'
 import { actorContext, type Person } from '~/server/context.server'
 import { closeDatabase } from '~/server/db.server'
 import { AppError } from '~/server/errors.server'
+import { sendThumbnail } from '~/server/sections/send-thumbnail.server'
 import { storedSection } from '~/server/sections/stored-section.server'
 import type { Connection } from '../../drizzle/client'
 import { cleanDatabase, testConnection } from '../setup/clean'
@@ -108,6 +109,30 @@ describe('every page for everybody', () => {
   it('shows a guest the site shared with them, and offers no site of their own', async () => {
     const { data } = await ask(sites.loader, world.people['guest-reader'], '/sites')
     expect(data).toMatchObject({ rows: [{ id: world.siteId, shared: true }], makes: false })
+  })
+})
+
+describe('the small drawing of a section', () => {
+  const path = (id: string) => `http://doab.example/api/sections/${id}/thumbnail.svg`
+  const get = (person: Person | null, headers: HeadersInit = {}) =>
+    sendThumbnail(connection.db, new Request(path(world.sectionId), { headers }), person, world.sectionId)
+  for (const who of WHO)
+    it(`${who}`, async () => {
+      const said = can({ grades: world.grades[who] }, 'section.see')
+      expect((await get(world.people[who])).status).toBe(said.yes ? 200 : said.status)
+    })
+  it('signed out, and for a section that is not there', async () => {
+    expect((await get(null)).status).toBe(401)
+    const made = crypto.randomUUID()
+    const { status } = await sendThumbnail(connection.db, new Request(path(made)), world.people.principal, made)
+    expect(status).toBe(404)
+  })
+  it('is not sent again while it is the same', async () => {
+    const first = await get(world.people.reader)
+    expect(first.headers.get('content-type')).toContain('image/svg+xml')
+    expect(await first.text()).toMatch(/^<svg/)
+    const again = await get(world.people.reader, { 'if-none-match': first.headers.get('etag') ?? '' })
+    expect(again.status).toBe(304)
   })
 })
 

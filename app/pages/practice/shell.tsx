@@ -59,6 +59,16 @@ export function Drawing({ svg }: { svg: string | null }) {
   return <div className="ui-drawing" dangerouslySetInnerHTML={{ __html: svg }} />
 }
 
+/** The small drawing of a section in a list. It stands beside the title, which says what it is. */
+export function SmallDrawing({ sectionId, drawn }: { sectionId: string; drawn: boolean }) {
+  if (!drawn) return <div className="ui-drawing ui-undrawn">cannot be drawn</div>
+  return (
+    <div className="ui-drawing">
+      <img src={`/api/sections/${sectionId}/thumbnail.svg`} alt="" width={240} height={96} loading="lazy" />
+    </div>
+  )
+}
+
 export function PageHead({
   title,
   trail,

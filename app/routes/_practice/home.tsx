@@ -1,16 +1,17 @@
 import { Link } from 'react-router'
-import { Drawing, day, PageHead } from '~/pages/practice/shell'
+import { day, PageHead, SmallDrawing } from '~/pages/practice/shell'
 import { formatQuantity } from '~/section'
 import { requirePerson } from '~/server/context.server'
 import { db } from '~/server/db.server'
 import { listRecent } from '~/server/practices/list-recent.server'
 import type { Route } from './+types/home'
+import { light } from './light'
 
 export const meta: Route.MetaFunction = () => [{ title: 'Home · Doab' }]
 
 export async function loader({ context, request }: Route.LoaderArgs) {
   const person = requirePerson(context, request)
-  return { name: person.practice?.name ?? person.name, recent: await listRecent(db, person) }
+  return { name: person.practice?.name ?? person.name, recent: light(await listRecent(db, person)) }
 }
 
 export default function Home({ loaderData: { name, recent } }: Route.ComponentProps) {
@@ -39,7 +40,7 @@ export default function Home({ loaderData: { name, recent } }: Route.ComponentPr
         <ul className="ui-cards">
           {recent.map((row) => (
             <li key={row.id} className="ui-card">
-              <Drawing svg={row.thumbnail} />
+              <SmallDrawing sectionId={row.id} drawn={row.drawn} />
               <div>
                 <Link to={`/sections/${row.id}`}>{row.title}</Link>
                 <p className="ui-small">

@@ -1,5 +1,5 @@
 import { data, Form, Link, redirect } from 'react-router'
-import { Drawing, day, PageHead } from '~/pages/practice/shell'
+import { day, PageHead, SmallDrawing } from '~/pages/practice/shell'
 import { formatQuantity } from '~/section'
 import { requirePerson } from '~/server/context.server'
 import { db } from '~/server/db.server'
@@ -12,6 +12,7 @@ import { archiveSite } from '~/server/sites/archive-site.server'
 import { findSite } from '~/server/sites/find-site.server'
 import { ListFilter, Pages, SortHead } from '~/ui/table'
 import type { Route } from './+types/site'
+import { light } from './light'
 import { listQuery } from './list-query'
 
 export const meta: Route.MetaFunction = ({ loaderData }) => [{ title: `${loaderData?.site.name ?? 'Site'} · Doab` }]
@@ -23,7 +24,7 @@ export async function loader({ context, request, params }: Route.LoaderArgs) {
     findSite(db, person, params.siteId),
     listSections(db, person, params.siteId, query),
   ])
-  return { ...found, ...list, archived: query.archived, search: query.search }
+  return { ...found, ...list, rows: light(list.rows), archived: query.archived, search: query.search }
 }
 
 /** What is done to a section or the site from its list. The service asks what the person may do. */
@@ -141,7 +142,7 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
               {rows.map((row) => (
                 <tr key={row.id}>
                   <td>
-                    <Drawing svg={row.thumbnail} />
+                    <SmallDrawing sectionId={row.id} drawn={row.drawn} />
                   </td>
                   <td>
                     <Link to={`/sections/${row.id}`}>
