@@ -170,6 +170,8 @@ describe('a tab that is closed while offline', () => {
     const page = await tab()
     await context.setOffline(true)
     await join(page)
+    // As on the sheet, which shows itself only when the local copy is open.
+    await page.evaluate(() => globalThis.page.connection.loaded)
     await draw(page, ['left'])
     await waitFor(page, 'offline', 1)
     await page.evaluate(() => globalThis.page.connection.close())
