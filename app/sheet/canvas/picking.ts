@@ -23,12 +23,12 @@ function measuring(): CanvasRenderingContext2D | null {
 export function pickAt(picture: Picture, state: SheetState, at: At): string | null {
   const ctx = measuring()
   if (!ctx) return null
-  const { plots } = picture.list
+  const seen = drawnAt(ctx, picture.list.plots, at)
   let area: string | null = null
   ctx.lineWidth = REACH[at.kind] * 2
-  for (let i = plots.length - 1; i >= 0; i--) {
-    const plot = plots[i]
-    if (!plot || !('of' in plot) || !PICKABLE.test(plot.of)) continue
+  for (let i = seen.length - 1; i >= 0; i--) {
+    const plot = seen[i]
+    if (!plot) continue
     const path = pickPath(plot.of, state)
     if (path === null) continue
     if (onLine(ctx, plot, at)) return path
@@ -37,16 +37,35 @@ export function pickAt(picture: Picture, state: SheetState, at: At): string | nu
   return area
 }
 
-function onLine(ctx: CanvasRenderingContext2D, plot: Plot, at: At): boolean {
+type Drawn = Extract<Plot, { of: string }>
+
+/** Plots of things that can be picked and are not clipped away at the pointer: what cannot be seen is not picked. */
+function drawnAt(ctx: CanvasRenderingContext2D, plots: readonly Plot[], at: At): Drawn[] {
+  const drawn: Drawn[] = []
+  let hidden = 0
+  let depth = 0
+  for (const plot of plots) {
+    if (plot.kind === 'clip-push') {
+      depth += 1
+      if (hidden === 0 && !ctx.isPointInPath(pathOf(plot.d), at.px, at.py)) hidden = depth
+    } else if (plot.kind === 'clip-pop') {
+      if (hidden === depth) hidden = 0
+      depth -= 1
+    } else if (hidden === 0 && 'of' in plot && PICKABLE.test(plot.of)) drawn.push(plot)
+  }
+  return drawn
+}
+
+function onLine(ctx: CanvasRenderingContext2D, plot: Drawn, at: At): boolean {
   if (plot.kind === 'path') return ctx.isPointInStroke(pathOf(plot.d), at.px, at.py)
   if (plot.kind !== 'text') return false
   const half = plot.size * 0.32 * plot.text.length
   const middle = plot.anchor === 'start' ? plot.x + half : plot.anchor === 'end' ? plot.x - half : plot.x
   return Math.abs(at.px - middle) <= half + 2 && at.py <= plot.y + 4 && at.py >= plot.y - plot.size - 2
 }
-function inArea(ctx: CanvasRenderingContext2D, plot: Plot, at: At): boolean {
+function inArea(ctx: CanvasRenderingContext2D, plot: Drawn, at: At): boolean {
   // The ground and the base are lines to pick, not the whole soil above and below.
-  if (!('of' in plot) || /^(ground|base)\b/.test(plot.of)) return false
+  if (/^(ground|base)\b/.test(plot.of)) return false
   if (plot.kind === 'hatch') return ctx.isPointInPath(pathOf(plot.clip), at.px, at.py, 'evenodd')
   if (plot.kind === 'path' && plot.ink.fill) return ctx.isPointInPath(pathOf(plot.d), at.px, at.py, plot.fillRule)
   return false
