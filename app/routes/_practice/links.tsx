@@ -35,6 +35,9 @@ export async function action({ context, request, params }: Route.ActionArgs) {
     throw redirect(`/sections/${params.sectionId}/links`)
   }
   if (intent === 'revoke-all') {
+    const facts = await standingForSection(db, person, params.sectionId)
+    if (!facts) throw notFound()
+    must(can(facts.standing, 'link.revoke'))
     const live = (await listLinks(db, person, params.sectionId)).filter(({ state }) => state === 'live')
     for (const { id } of live) await revokeLink(db, person, params.sectionId, id)
     throw redirect(`/sections/${params.sectionId}/links`)
