@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import type { Section } from '~/section'
-import { readAt, type SolveOptions, solveSteady } from '~/solver'
+import { arrows, flowLines, footing, readAt, type SolveOptions, solveSteady, travelTime } from '~/solver'
 import { rain, sectionOf, water } from '../../app/solver/testing'
 import { drawable } from '../../app/solver/testing/arbitrary'
 
@@ -114,6 +114,22 @@ rows.push({
   goal: 1.5,
   note: `${general.error.nodes} nodes, ${general.error.refinements} refinements`,
 })
+rows.push({
+  what: 'flow lines and arrows as the sheet asks for them',
+  median: median(() => {
+    flowLines(general, { tubes: 10, stations: 120 })
+    arrows(general, { columns: 12, rows: 3 })
+  }),
+  goal: 4,
+  note: '10 tubes, 36 arrows, general path',
+})
+rows.push({
+  what: 'travel time from one spot',
+  median: median(() => travelTime(general, 100)),
+  goal: null,
+  note: 'read at the reading line',
+})
+rows.push({ what: 'footing', median: median(() => footing(sloping, general)), goal: null, note: 'all lines' })
 rows.push({
   what: 'same as exact, general path forced',
   median: median(() => solveSteady(level, { path: 'general' })),
