@@ -44,6 +44,7 @@ export default defineConfig({
         extends: true,
         test: {
           name: 'unit',
+          setupFiles: ['tests/setup/seed.ts'],
           // Property tests take seconds, and longer where the machine is shared: a limit for what hangs, not for speed.
           testTimeout: 120_000,
           environment: 'node',

@@ -44,3 +44,15 @@ export function fitText(text: string, width: number, size: number, weight: Weigh
   }
   return room > 0 ? `${kept.trimEnd()}…` : ''
 }
+
+/** The text in lines no wider than `width`, broken between words. */
+export function wrapText(text: string, width: number, size: number, weight: Weight = 400): string[] {
+  const lines: string[] = []
+  for (const word of text.split(' ')) {
+    const last = lines[lines.length - 1]
+    if (last !== undefined && textWidth(`${last} ${word}`, size, weight) <= width)
+      lines[lines.length - 1] = `${last} ${word}`
+    else lines.push(word)
+  }
+  return lines
+}

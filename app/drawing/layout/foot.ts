@@ -1,4 +1,4 @@
-import { fitText, textWidth } from '../fonts/measure'
+import { fitText, textWidth, wrapText } from '../fonts/measure'
 import type { Plot } from '../plot'
 import type { Scene } from '../scene'
 import { inkOf, type Theme } from '../styles'
@@ -74,22 +74,27 @@ export function footOf(
     )
     right -= width
   }
-  const caution = fitText(scene.caution, right - 4 * u, size * 0.92, 400)
-  if (caution.length > 24)
+  // The caution is never cut: what does not fit on one line stands on two or three, smaller.
+  const small = [0.92, 0.8, 0.68]
+    .map((times) => ({ size: size * times, lines: wrapText(scene.caution, right - 4 * u, size * times) }))
+    .find(({ lines, size: letter }) => lines.length * letter * 1.2 <= h)
+  small?.lines.forEach((text, i) => {
+    const middle = (i - (small.lines.length - 1) / 2) * small.size * 1.2
     plots.push({
       kind: 'text',
-      id: 'caution',
+      id: i === 0 ? 'caution' : `caution-${i}`,
       of: 'caution',
       role: 'caution',
       layer: 'frame',
       x: 2 * u,
-      y: y + h / 2 + size * 0.32,
-      text: caution,
-      size: size * 0.92,
+      y: y + h / 2 + small.size * 0.35 + middle,
+      text,
+      size: small.size,
       weight: 400,
       family: 'sans',
       anchor: 'start',
       fill: inkOf('caution', theme, u).fill ?? fill,
     })
+  })
   return plots
 }
