@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { LiveSection } from '~/live'
+import { footingOf } from './compute'
 import { openTogether } from './testing'
 
 const pair = () => {
@@ -105,6 +106,33 @@ describe('gestures', () => {
     expect(a.presence.gesture).not.toBeNull()
     a.hear({ kind: 'stored' })
     expect(a.presence.gesture).toBeNull()
+  })
+})
+
+describe('the footing', () => {
+  it('follows a drag at a walking pace and is up to date when the drag is over', () => {
+    let now = 1000
+    const [a] = openTogether(['Ada'], { now: () => now })
+    if (!a) throw new Error('a desk')
+    const frame = (value: number) => {
+      a.sheet.gesture.show([{ do: 'set', path: 'left.stage', value }])
+      a.sheet.settle()
+      return a.sheet.get().footing
+    }
+    a.sheet.gesture.start()
+    const first = frame(9.1)
+    now += 16
+    expect(frame(9.9)).toBe(first)
+    now += 300
+    const second = frame(10)
+    expect(second).not.toBe(first)
+    now += 16
+    expect(frame(10.4)).toBe(second)
+    a.sheet.gesture.finish()
+    const { live, solution, footing } = a.sheet.get()
+    expect(footing).toEqual(footingOf(live.section, null, solution))
+    expect(footing).not.toEqual(second)
+    a.sheet.close()
   })
 })
 

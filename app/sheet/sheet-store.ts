@@ -3,8 +3,9 @@ import { createStore } from 'zustand/vanilla'
 import type { Act } from '~/access/acts'
 import { applyEdits, type Edit, type LiveSection, LOCAL, type Presence, readLive, writeEdits } from '~/live'
 import { toCase } from './case-edits'
-import { gatherProblems, readingAt, type Solve, solveHere } from './compute'
+import { answerOf, footingOf, gatherProblems, problemsOf, readingAt, solveHere } from './compute'
 import type { Connection } from './connection/types'
+import { exists } from './exists'
 import { animationFrames, type Frames } from './frames'
 import { createHistory } from './history'
 import type { LinkState, Peer, Sheet, SheetState } from './state'
@@ -21,7 +22,6 @@ export type SheetOptions = {
     Omit<SheetState, 'sectionId' | 'live' | 'solution' | 'footing' | 'problems' | 'acts' | 'may' | 'read'>
   >
   /** For tests. */
-  solve?: Solve
   frames?: (run: () => void) => Frames
   now?: () => number
 }
@@ -35,6 +35,8 @@ export type OpenSheet = Sheet & {
   present(change: Partial<Omit<Presence, 'who'>>): void
   /** Oneself, as the server says; null before it has. */
   me(): Presence['who'] | null
+  /** The reading line moved to x with the next frame, together with what else changes in it. */
+  readAlong(x: number): void
   /** Work out now what waits for the next frame. */
   settle(): void
   /** Stop listening; a gesture in progress is dropped. The connection and the document stay the caller's. */
@@ -43,6 +45,8 @@ export type OpenSheet = Sheet & {
 
 /** State that the others see as it changes. */
 const SHOWN = ['picked', 'caseId', 'tool', 'reading', 'presenting'] as const
+/** While something is dragged the footing follows at this pace, ms. */
+const FOOTING_EVERY = 200
 /** The others keep seeing a finished gesture at most this long, ms, until its edit has reached them. */
 const LINGER = 2000
 
@@ -54,17 +58,21 @@ type InProgress = { id: string; edits: Edit[]; make: ((stored: LiveSection) => E
  */
 export function createSheet(options: SheetOptions): OpenSheet {
   const { doc } = options
-  const solve = options.solve ?? solveHere
   let connection: Connection | null = null
   let unlisten: (() => void) | null = null
   let stored = readLive(doc)
   let docChanged = false
+  let along: number | null = null
   let own: InProgress | null = null
   let linger: ReturnType<typeof setTimeout> | null = null
   let gestures = 0
   let said = 0
+  let footingDue = false
+  let footedAt = 0
+  let footLater: ReturnType<typeof setTimeout> | null = null
+  const now = options.now ?? Date.now
 
-  const first = solve(stored.section, options.initial?.caseId ?? null)
+  const first = solveHere(stored.section, options.initial?.caseId ?? null)
   const store = createStore<SheetState>()(() => ({
     caseId: null,
     tool: 'pick',
@@ -120,30 +128,47 @@ export function createSheet(options: SheetOptions): OpenSheet {
     }
     const edits = own ? [...foreignEdits(), ...own.edits] : foreignEdits()
     const live = edits.length > 0 ? applyEdits(stored, edits) : stored
-    const { caseId: wanted, reading, picked } = get()
+    const { caseId: wanted, picked } = get()
+    const reading = along ?? get().reading
+    along = null
     const caseId = wanted !== null && live.section.cases.some((one) => one.id === wanted) ? wanted : null
     const change: Partial<SheetState> = {}
     if (live !== get().live) change.live = live
     if (caseId !== wanted) change.caseId = caseId
     if (live.section !== solvedSection || caseId !== solvedCase) {
-      const answer = solve(live.section, caseId)
+      const answer = answerOf(live.section, caseId)
       solvedSection = live.section
       solvedCase = caseId
+      footingDue = true
       change.solution = answer.solution
-      change.footing = answer.footing
-      change.problems = gatherProblems(live, answer)
+      change.problems = gatherProblems(live, answer, get().problems)
       change.read = readingAt(answer.solution, reading)
-    } else if (live !== get().live) {
-      change.problems = gatherProblems(live, { ...get(), problems: solverProblems(get()) })
+    } else if (live !== get().live)
+      change.problems = gatherProblems(live, { problems: problemsOf(get().solution) }, get().problems)
+    if (footingDue && (edits.length === 0 || now() - footedAt >= FOOTING_EVERY)) {
+      footingDue = false
+      footedAt = now()
+      change.footing = footingOf(live.section, caseId, change.solution ?? get().solution)
     }
+    // A drag that comes to rest gets its footing without another move.
+    if (footingDue) footLater ??= setTimeout(footNow, FOOTING_EVERY)
     if (live !== get().live) {
       const kept = picked.filter((path) => exists(live, path))
       if (kept.length !== picked.length) change.picked = kept
     }
+    if (reading !== get().reading) {
+      change.reading = reading
+      change.read = readingAt(change.solution ?? get().solution, reading)
+    }
     if (Object.keys(change).length > 0) put(change)
+    if (change.reading !== undefined) connection?.present({ reading })
     if (change.picked) connection?.present({ picked: change.picked })
   }
   const frames = (options.frames ?? animationFrames)(work)
+  function footNow() {
+    footLater = null
+    frames.ask()
+  }
 
   const history = createHistory(doc, {
     change: () => put({ canUndo: history.canUndo(), canRedo: history.canRedo() }),
@@ -235,6 +260,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
     get,
     subscribe: (listener) => store.subscribe(listener),
     set(change) {
+      if (change.reading !== undefined) along = null
       put(change)
       if (change.caseId !== undefined) {
         frames.ask()
@@ -299,11 +325,16 @@ export function createSheet(options: SheetOptions): OpenSheet {
       next.present(Object.fromEntries(SHOWN.map((key) => [key, get()[key]])))
     },
     present: (change) => connection?.present(change),
+    readAlong(x) {
+      along = x
+      frames.ask()
+    },
     me: () => connection?.who ?? null,
     settle,
     close() {
       gesture.cancel()
       stopLinger()
+      if (footLater !== null) clearTimeout(footLater)
       frames.stop()
       unlisten?.()
       doc.off('update', onUpdate)
@@ -334,32 +365,3 @@ export function createSheet(options: SheetOptions): OpenSheet {
 }
 
 const hasGesture = (peers: Peer[]) => peers.some((peer) => peer.gesture)
-
-/** The answer's own problems, told apart from the drawing's when only the drawing's have changed. */
-const solverProblems = ({ solution }: SheetState) =>
-  solution.status === 'solved' ? solution.warnings : [...solution.reason, ...solution.warnings]
-
-/** Does this path still lead somewhere? Vertices by key ("ground.v:KEY"), objects by id, banks always. */
-export function exists(live: LiveSection, path: string): boolean {
-  const [vertexOf, key] = path.split('.v:')
-  if (key !== undefined) {
-    if (vertexOf === 'ground' || vertexOf === 'base') return live.keys[vertexOf].includes(key)
-    return live.keys.bodies[(vertexOf ?? '').replace(/^bodies\./, '')]?.includes(key) ?? false
-  }
-  const [list, id] = path.split('.')
-  if (id === undefined || list === 'left' || list === 'right') return true
-  if (list === 'marks') return live.markup.marks.some((mark) => mark.id === id)
-  if (list === 'layers') return live.markup.layers.some((layer) => layer.id === id)
-  const objects = lists(live)[list ?? '']
-  return objects ? objects.some((object) => object.id === id) : true
-}
-
-const lists = ({ section }: LiveSection): Record<string, { id: string }[]> => ({
-  materials: section.materials,
-  bodies: section.bodies,
-  recharge: section.recharge,
-  features: section.features,
-  observations: section.observations,
-  limits: section.limits,
-  cases: section.cases,
-})

@@ -5,22 +5,25 @@ import type { PlotHatch } from '~/drawing'
  * thousands of strokes are painted once and copied afterwards. Only what is asked for again is kept (a pan makes new marks with
  * every frame), and only so much.
  */
-export type Stamp = { image: CanvasImageSource; x: number; y: number; width: number; height: number }
-
 const MOST = 32
 /** Largest picture kept, pixels: a hatch over a whole large screen. */
 const LARGEST = 8_000_000
 /** By the marks themselves: the drawing hands out the same text while they stay the same. */
-const kept = new Map<string, { how: string; stamp: Stamp | null; asked: number }>()
+const kept = new Map<string, { how: string; pattern: CanvasPattern | null; asked: number }>()
 
-/** The picture of a hatch's marks in CSS pixels, or null when it is cheaper, or safer, to draw them. */
-export function stampOf(plot: PlotHatch, ratio: number, draw: (ctx: CanvasRenderingContext2D) => void): Stamp | null {
+/** A fill that holds a hatch's marks where they stand, or null when it is cheaper, or safer, to draw them. */
+export function patternOf(
+  ctx: CanvasRenderingContext2D,
+  plot: PlotHatch,
+  draw: (ctx: CanvasRenderingContext2D) => void,
+): CanvasPattern | null {
+  const ratio = ctx.getTransform().a
   const key = plot.marks || plot.dots
   const how = `${ratio} ${plot.ink.stroke} ${plot.ink.width} ${plot.ink.fill}`
   const known = kept.get(key)
-  const entry = known?.how === how ? known : { how, stamp: null, asked: 0 }
+  const entry = known?.how === how ? known : { how, pattern: null, asked: 0 }
   entry.asked += 1
-  if (entry.asked === 2) entry.stamp = make(plot, ratio, draw)
+  if (entry.asked === 2) entry.pattern = make(ctx, plot, ratio, draw)
   // Asked for last, dropped last.
   kept.delete(key)
   kept.set(key, entry)
@@ -28,10 +31,15 @@ export function stampOf(plot: PlotHatch, ratio: number, draw: (ctx: CanvasRender
     const oldest = kept.keys().next().value
     if (oldest !== undefined) kept.delete(oldest)
   }
-  return entry.stamp
+  return entry.pattern
 }
 
-function make(plot: PlotHatch, ratio: number, draw: (ctx: CanvasRenderingContext2D) => void): Stamp | null {
+function make(
+  on: CanvasRenderingContext2D,
+  plot: PlotHatch,
+  ratio: number,
+  draw: (ctx: CanvasRenderingContext2D) => void,
+): CanvasPattern | null {
   const box = boxOf(`${plot.marks}${plot.dots}`)
   if (!box) return null
   const reach = 12 + (plot.ink.width ?? 1)
@@ -48,7 +56,9 @@ function make(plot: PlotHatch, ratio: number, draw: (ctx: CanvasRenderingContext
   if (!ctx) return null
   ctx.setTransform(ratio, 0, 0, ratio, -x, -y)
   draw(ctx)
-  return { image: canvas, x: x / ratio, y: y / ratio, width: width / ratio, height: height / ratio }
+  const pattern = on.createPattern(canvas, 'no-repeat')
+  pattern?.setTransform(new DOMMatrix([1 / ratio, 0, 0, 1 / ratio, x / ratio, y / ratio]))
+  return pattern
 }
 
 /** Box round all absolute points of a path text; what is drawn relative to them reaches a few pixels further. */

@@ -128,12 +128,14 @@ export function listen(place: Place): () => void {
     if (active ? active.id !== event.pointerId : fingers.size > 1) return
     // A pen tells more points than there are frames; strokes want all of them.
     const all = active && event.pointerType === 'pen' ? (event.getCoalescedEvents?.() ?? []) : []
+    let at = place.locate(event)
     for (const each of all.length > 1 ? all : [event]) {
-      const at = place.locate(each)
+      if (each !== event) at = place.locate(each)
       if (active && Math.hypot(at.px - active.at.px, at.py - active.at.py) > DOUBLE_PX[at.kind]) active.moved = true
       place.machine().move(at)
     }
-    place.hover(place.locate(event))
+    // Not asked for again: what the tool did may have moved the page, and measuring it twice a frame costs a layout.
+    place.hover(at)
   }
 
   function up(event: PointerEvent) {

@@ -70,6 +70,7 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
   let hovering: At | null = null
   let held: string | null = null
   let frozen: View | null = null
+  let place: DOMRect | null = null
   let closed = false
 
   still.shape.sceneFunc((context) => paint(context._context, plots.still))
@@ -205,8 +206,9 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
   }
 
   function locate(event: { clientX: number; clientY: number } & Partial<PointerEvent>): At {
-    const box = element.getBoundingClientRect()
-    const [px, py] = [event.clientX - box.left, event.clientY - box.top]
+    // Measured when a press begins and not again while it lasts: asking costs a layout of the whole page.
+    if (place === null || !machine.state.busy) place = element.getBoundingClientRect()
+    const [px, py] = [event.clientX - place.left, event.clientY - place.top]
     const spot = picture ? toMetres(picture, px, py) : { x: 0, z: 0 }
     return {
       px,
@@ -236,7 +238,7 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
     // The reading line goes with the pointer and stays where it was left.
     const x = Math.min(right.x, Math.max(left.x, at.x))
     if (at.panel !== null && at.x > left.x - 0.02 * (right.x - left.x) && at.x < right.x + 0.02 * (right.x - left.x)) {
-      if (x !== reading) sheet.set({ reading: x })
+      if (x !== reading) sheet.readAlong(x)
     }
     ask({ overlay: true })
   }
@@ -279,6 +281,7 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
     const { width, height } = element.getBoundingClientRect()
     const ratio = window.devicePixelRatio || 1
     size = { width: Math.floor(width), height: Math.floor(height) }
+    place = null
     if (size.width < 2 || size.height < 2) return
     for (const { layer: each } of [still, moving, over]) each.getCanvas().setPixelRatio(ratio)
     stage.size(size)

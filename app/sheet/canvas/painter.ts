@@ -1,5 +1,5 @@
 import type { Ink, Plot, PlotHatch, PlotPath, PlotText } from '~/drawing'
-import { stampOf } from './hatch-cache'
+import { patternOf } from './hatch-cache'
 
 /**
  * The canvas painter: walks a plot list and does what it says. The konva layers hand it their drawing context; nothing here
@@ -96,12 +96,16 @@ function paintHatch(ctx: CanvasRenderingContext2D, plot: PlotHatch) {
       on.fillStyle = ink.stroke ?? ink.fill ?? 'transparent'
       on.fill(pathOf(dots))
     }
-    ctx.save()
-    ctx.clip(outline, 'evenodd')
-    const stamp = stampOf(plot, ctx.getTransform().a, draw)
-    if (stamp) ctx.drawImage(stamp.image, stamp.x, stamp.y, stamp.width, stamp.height)
-    else draw(ctx)
-    ctx.restore()
+    const pattern = patternOf(ctx, plot, draw)
+    if (pattern) {
+      ctx.fillStyle = pattern
+      ctx.fill(outline, 'evenodd')
+    } else {
+      ctx.save()
+      ctx.clip(outline, 'evenodd')
+      draw(ctx)
+      ctx.restore()
+    }
   }
   ctx.globalAlpha = before
 }
