@@ -109,6 +109,35 @@ describe('gestures', () => {
   })
 })
 
+describe('listeners', () => {
+  it('hear every change, but of a drag only every other frame, and always its end', () => {
+    let now = 1000
+    const [a] = openTogether(['Ada'], { now: () => now })
+    if (!a) throw new Error('a desk')
+    const heard = { subscribed: 0, watching: 0 }
+    a.sheet.subscribe(() => {
+      heard.subscribed += 1
+    })
+    a.sheet.watch(() => {
+      heard.watching += 1
+    })
+    a.sheet.set({ grid: false })
+    a.sheet.set({ grid: true })
+    expect(heard).toEqual({ subscribed: 2, watching: 2 })
+    a.sheet.gesture.start()
+    for (let i = 1; i <= 10; i++) {
+      now += 16
+      a.sheet.gesture.show([{ do: 'set', path: 'left.stage', value: 9 + i / 20 }])
+      a.sheet.settle()
+    }
+    expect(heard).toEqual({ subscribed: 7, watching: 12 })
+    const before = heard.subscribed
+    a.sheet.gesture.finish()
+    expect(heard.subscribed).toBeGreaterThan(before)
+    a.sheet.close()
+  })
+})
+
 describe('the footing', () => {
   it('follows a drag at a walking pace and is up to date when the drag is over', () => {
     let now = 1000

@@ -37,6 +37,11 @@ export type OpenSheet = Sheet & {
   me(): Presence['who'] | null
   /** The reading line moved to x with the next frame, together with what else changes in it. */
   readAlong(x: number): void
+  /**
+   * As `subscribe`, but told of every frame of a drag. Those who subscribe hear of a drag at half pace: numbers beside the
+   * drawing need no more, and the drawing gets the time.
+   */
+  watch(listener: () => void): () => void
   /** Work out now what waits for the next frame. */
   settle(): void
   /** Stop listening; a gesture in progress is dropped. The connection and the document stay the caller's. */
@@ -45,6 +50,8 @@ export type OpenSheet = Sheet & {
 
 /** State that the others see as it changes. */
 const SHOWN = ['picked', 'caseId', 'tool', 'reading', 'presenting'] as const
+/** Subscribers hear of a drag at most this often, ms: every other frame. */
+const TELL_EVERY = 30
 /** While something is dragged the footing follows at this pace, ms. */
 const FOOTING_EVERY = 200
 /** The others keep seeing a finished gesture at most this long, ms, until its edit has reached them. */
@@ -111,6 +118,20 @@ export function createSheet(options: SheetOptions): OpenSheet {
   const get = store.getState
   const put = (change: Partial<SheetState>) => store.setState(change)
 
+  const listeners = new Set<() => void>()
+  let pacing = false
+  let toldAt = 0
+  let tellLater: ReturnType<typeof setTimeout> | null = null
+  function tell() {
+    if (tellLater !== null) clearTimeout(tellLater)
+    tellLater = null
+    toldAt = now()
+    for (const listener of [...listeners]) listener()
+  }
+  store.subscribe(() => {
+    if (!pacing) tell()
+  })
+
   let solvedSection = stored.section
   let solvedCase = get().caseId
 
@@ -160,7 +181,12 @@ export function createSheet(options: SheetOptions): OpenSheet {
       change.reading = reading
       change.read = readingAt(change.solution ?? get().solution, reading)
     }
-    if (Object.keys(change).length > 0) put(change)
+    if (Object.keys(change).length > 0) {
+      pacing = edits.length > 0 && now() - toldAt < TELL_EVERY
+      put(change)
+      if (pacing) tellLater ??= setTimeout(tell, TELL_EVERY)
+      pacing = false
+    }
     if (change.reading !== undefined) connection?.present({ reading })
     if (change.picked) connection?.present({ picked: change.picked })
   }
@@ -258,7 +284,11 @@ export function createSheet(options: SheetOptions): OpenSheet {
   const sheet: OpenSheet = {
     doc,
     get,
-    subscribe: (listener) => store.subscribe(listener),
+    subscribe(listener) {
+      listeners.add(listener)
+      return () => listeners.delete(listener)
+    },
+    watch: (listener) => store.subscribe(listener),
     set(change) {
       if (change.reading !== undefined) along = null
       put(change)
@@ -307,6 +337,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
       },
       peers(peers) {
         const before = get().peers
+        if (before.length === 0 && peers.length === 0) return
         put({ peers })
         if (get().following !== null) follow()
         if (hasGesture(before) || hasGesture(peers)) frames.ask()
@@ -335,6 +366,7 @@ export function createSheet(options: SheetOptions): OpenSheet {
       gesture.cancel()
       stopLinger()
       if (footLater !== null) clearTimeout(footLater)
+      if (tellLater !== null) clearTimeout(tellLater)
       frames.stop()
       unlisten?.()
       doc.off('update', onUpdate)

@@ -266,7 +266,7 @@ export function mountCanvas(element: HTMLElement, sheet: OpenSheet, ui: CanvasUi
   started = true
   showCursor()
 
-  const unsubscribe = sheet.subscribe(() => {
+  const unsubscribe = sheet.watch(() => {
     const state = sheet.get()
     if (state.tool !== before.tool) machine.use(TOOLS[state.tool])
     if (state.following !== null && (state.peers !== before.peers || state.following !== before.following)) follow()
