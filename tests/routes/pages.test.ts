@@ -106,6 +106,13 @@ describe('every page for everybody', () => {
     expect(seen[0]?.data).toMatchObject({ recent: [] })
     expect(seen[1]?.data).toMatchObject({ rows: [], total: 0 })
   })
+  it('offers a new site to whoever may make one, and to no reader', async () => {
+    const makes = async (who: 'engineer' | 'reader' | 'guest-reader') =>
+      (await ask(home.loader, world.people[who], '/home')).data
+    expect(await makes('engineer')).toMatchObject({ makes: true })
+    expect(await makes('reader')).toMatchObject({ makes: false })
+    expect(await makes('guest-reader')).toMatchObject({ makes: false })
+  })
   it('shows a guest the site shared with them, and offers no site of their own', async () => {
     const { data } = await ask(sites.loader, world.people['guest-reader'], '/sites')
     expect(data).toMatchObject({ rows: [{ id: world.siteId, shared: true }], makes: false })
@@ -179,7 +186,7 @@ describe('forms, as they are sent without JavaScript', () => {
     const form = { intent: 'rename', section: world.sectionId, title: '  ' }
     const { status, data } = await ask(site.action, world.people.engineer, `/sites/${world.siteId}`, form)
     expect(status).toBe(400)
-    expect(data).toMatchObject({ wrong: expect.stringContaining('title') })
+    expect(data).toMatchObject({ wrong: expect.stringContaining('title'), section: world.sectionId, typed: '  ' })
   })
   it('refuses to rename by a reader and by a stranger', async () => {
     const form = { intent: 'rename', section: world.sectionId, title: 'Mine' }

@@ -27,7 +27,7 @@ export const linkForm = z.object({
   expires: z
     .string()
     .trim()
-    .regex(/^\d{4}-\d{2}-\d{2}$/, 'Write the last day as 2027-03-31.')
+    .pipe(z.iso.date('Write the last day as a day of the calendar, such as 2027-03-31.'))
     .optional(),
 })
 export const shareForm = z.object({

@@ -132,10 +132,22 @@ export default function EditSite({ loaderData: { site, edits, shared }, actionDa
                 <fieldset>
                   <legend className="ui-legend">As</legend>
                   <label className="ui-check">
-                    <input type="radio" name="role" value="reader" defaultChecked /> reader
+                    <input
+                      type="radio"
+                      name="role"
+                      value="reader"
+                      defaultChecked={fields.role.initialValue !== 'editor'}
+                    />{' '}
+                    reader
                   </label>{' '}
                   <label className="ui-check">
-                    <input type="radio" name="role" value="editor" /> editor
+                    <input
+                      type="radio"
+                      name="role"
+                      value="editor"
+                      defaultChecked={fields.role.initialValue === 'editor'}
+                    />{' '}
+                    editor
                   </label>
                 </fieldset>
               </>

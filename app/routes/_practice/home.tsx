@@ -1,4 +1,5 @@
 import { Link } from 'react-router'
+import { TABLE } from '~/access/decide'
 import { day, PageHead, SmallDrawing } from '~/pages/practice/shell'
 import { formatQuantity } from '~/section'
 import { requirePerson } from '~/server/context.server'
@@ -11,19 +12,22 @@ export const meta: Route.MetaFunction = () => [{ title: 'Home · Doab' }]
 
 export async function loader({ context, request }: Route.LoaderArgs) {
   const person = requirePerson(context, request)
-  return { name: person.practice?.name ?? person.name, recent: light(await listRecent(db, person)) }
+  const makes = person.practice !== null && TABLE['site.create'].includes(person.practice.role)
+  return { name: person.practice?.name ?? person.name, recent: light(await listRecent(db, person)), makes }
 }
 
-export default function Home({ loaderData: { name, recent } }: Route.ComponentProps) {
+export default function Home({ loaderData: { name, recent, makes } }: Route.ComponentProps) {
   return (
     <>
       <PageHead title={name} lead="Sections drawn on lately">
         <Link to="/sites" className="ui-button">
           All sites
         </Link>
-        <Link to="/sites/new" className="ui-button ui-strong">
-          New site
-        </Link>
+        {makes ? (
+          <Link to="/sites/new" className="ui-button ui-strong">
+            New site
+          </Link>
+        ) : null}
       </PageHead>
       {recent.length === 0 ? (
         <div className="ui-empty">
@@ -32,9 +36,11 @@ export default function Home({ loaderData: { name, recent } }: Route.ComponentPr
             A site is one job. On it stand sections: strips of ground between two waters, drawn together, whose drawing
             is the calculation.
           </p>
-          <Link to="/sites/new" className="ui-button ui-strong">
-            Make the first site
-          </Link>
+          {makes ? (
+            <Link to="/sites/new" className="ui-button ui-strong">
+              Make the first site
+            </Link>
+          ) : null}
         </div>
       ) : (
         <ul className="ui-cards">

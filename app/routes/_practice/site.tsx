@@ -55,7 +55,7 @@ export async function action({ context, request, params }: Route.ActionArgs) {
   } catch (error) {
     // What was typed wrongly is said on the page; refusals go to the boundary.
     if (error instanceof AppError && error.code === 'invalid')
-      return data({ wrong: error.message, section: id }, { status: 400 })
+      return data({ wrong: error.message, section: id, typed: String(form.get('title') ?? '') }, { status: 400 })
     throw error
   }
 }
@@ -63,6 +63,7 @@ export async function action({ context, request, params }: Route.ActionArgs) {
 export default function Site({ loaderData, actionData }: Route.ComponentProps) {
   const { site, acts, rows, total, pages, archived, search } = loaderData
   const may = (act: (typeof acts)[number]) => acts.includes(act)
+  const wrong = actionData && 'wrong' in actionData ? actionData : null
   return (
     <>
       <PageHead
@@ -88,9 +89,9 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
         ) : null}
       </PageHead>
       {site.note ? <p>{site.note}</p> : null}
-      {actionData && 'wrong' in actionData ? (
+      {wrong && !rows.some(({ id }) => id === wrong.section) ? (
         <p role="alert" className="ui-alert">
-          {actionData.wrong}
+          {wrong.wrong}
         </p>
       ) : null}
       <ListFilter what="a section" archived={archived} />
@@ -165,7 +166,7 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
                   </td>
                   <td>
                     {may('section.rename') || may('section.archive') ? (
-                      <details className="ui-more">
+                      <details className="ui-more" open={wrong?.section === row.id || undefined}>
                         <summary className="ui-button ui-quiet" aria-label={`Change ${row.title}`}>
                           Change
                         </summary>
@@ -175,13 +176,20 @@ export default function Site({ loaderData, actionData }: Route.ComponentProps) {
                               <input type="hidden" name="section" value={row.id} />
                               <input
                                 name="title"
-                                defaultValue={row.title}
+                                defaultValue={wrong?.section === row.id ? wrong.typed : row.title}
                                 aria-label={`New title of ${row.title}`}
+                                aria-invalid={wrong?.section === row.id || undefined}
+                                aria-describedby={wrong?.section === row.id ? `wrong-${row.id}` : undefined}
                                 className="ui-input"
                               />
                               <button type="submit" name="intent" value="rename" className="ui-button ui-quiet">
                                 Rename
                               </button>
+                              {wrong?.section === row.id ? (
+                                <p className="ui-wrong" id={`wrong-${row.id}`} role="alert">
+                                  {wrong.wrong}
+                                </p>
+                              ) : null}
                             </Form>
                           ) : null}
                           <Form method="post" className="ui-row">
