@@ -59,6 +59,8 @@ export function create(deps: Deps): Sidecar {
   const secret = new TextEncoder().encode(deps.liveSecret)
   const connections = new Map<string, Connection>()
   const perAddress = new Map<string, number>()
+  /** Sockets of a holder that have shown a ticket and are not in their room yet. */
+  const admitting = new Map<string, number>()
   const banned = new Map<string, number>()
   let sockets = 0
   let draining = false
@@ -182,8 +184,26 @@ export function create(deps: Deps): Sidecar {
     const claims = await readTicket(new URL(request.url ?? '/', 'http://sidecar'), secret)
     const holder = claims.who.kind === 'person' ? claims.who.userId : claims.who.linkId
     const most = claims.who.kind === 'person' ? limits.socketsPerPerson : limits.socketsPerLink
-    if ([...connections.values()].filter((c) => c.holder === holder).length >= most)
-      throw new Refusal(CLOSE.tooMany, 'Too many sheets are open. Close some and try again.')
+    const open = [...connections.values()].filter((c) => c.holder === holder).length
+    // Those still on their way in count, too: several at once would else all find the last place free.
+    const coming = admitting.get(holder) ?? 0
+    if (open + coming >= most) throw new Refusal(CLOSE.tooMany, 'Too many sheets are open. Close some and try again.')
+    admitting.set(holder, coming + 1)
+    try {
+      return await letIn(socket, claims, holder, gone)
+    } finally {
+      const left = (admitting.get(holder) ?? 1) - 1
+      if (left > 0) admitting.set(holder, left)
+      else admitting.delete(holder)
+    }
+  }
+
+  async function letIn(
+    socket: WebSocket,
+    claims: Awaited<ReturnType<typeof readTicket>>,
+    holder: string,
+    gone: () => boolean,
+  ): Promise<Connection | null> {
     const until = banned.get(holder)
     if (until !== undefined && until > Date.now()) throw new Refusal(CLOSE.hostile)
     banned.delete(holder)
